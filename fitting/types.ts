@@ -1,0 +1,255 @@
+/**
+ * The types that cross the engine's door. Angles in a request are radians, epochs Julian years (TT), separations
+ * arcseconds, radii in the target's own unit. A result is plain JSON with angles in degrees.
+ */
+
+export const KINDS = ['relative', 'equatorial', 'plane'] as const
+export type Kind = (typeof KINDS)[number]
+
+export const MODELS = ['kepler', 'line', 'still'] as const
+export type Model = (typeof MODELS)[number]
+
+/** What every measure carries, whatever its kind. */
+export interface MeasureBase {
+  /** Stable identifier; results refer to measures by it. */
+  id: string
+  /** Credited observer; only compared for equality and sorted by. */
+  observer: string
+  station?: string
+  /** Set aside: reported with its residual, left out of every sum. */
+  setAside?: boolean
+  /** Multiplies the weight 1/σ² of this measure; default 1, must be > 0. */
+  weightFactor?: number
+}
+
+export interface PolarPosition {
+  form: 'polar'
+  /** Position angle from north through east, rad; undefined where only ρ was measured. */
+  thetaRad?: number
+  /** Separation, arcsec, > 0; undefined where only θ was measured. */
+  rhoArcsec?: number
+  sigmaThetaRad?: number
+  sigmaRhoArcsec?: number
+  /** Correlation of θ and ρ, in (−1, 1). */
+  correlation?: number
+  /** Ambiguous: enters modulo 180°. */
+  quadrant?: 'stated' | 'ambiguous'
+}
+
+export interface RectangularPosition {
+  form: 'rectangular'
+  eastArcsec: number
+  northArcsec: number
+  sigmaEastArcsec?: number
+  sigmaNorthArcsec?: number
+  correlation?: number
+}
+
+/** Not resolved: kept and shown, never fitted. */
+export interface LimitPosition {
+  form: 'limit'
+  rhoLimitArcsec: number
+}
+
+export interface RelativeMeasure extends MeasureBase {
+  /** Julian year, TT; 1600 to 2500. */
+  epochYr: number
+  position: PolarPosition | RectangularPosition | LimitPosition
+  /** Number of nights in the mean, ≥ 1. */
+  nights?: number
+}
+
+export interface PlaneMeasure extends MeasureBase {
+  /** Direction in the plane of the orbit, rad. */
+  phiRad: number
+  /** Distance from the focus in the target's unit, > 0; exactly one of r and diameterArcmin. */
+  r?: number
+  sigmaR?: number
+  /** Apparent diameter, arcmin, > 0: r = scale / diameter. */
+  diameterArcmin?: number
+  sigmaDiameterArcmin?: number
+  /** Julian year, TT, where a time was given. */
+  epochYr?: number
+}
+
+export interface FitSettings {
+  model?: Model
+  loss?: 'squares' | 'huber' | 'biweight'
+  weights?: 'stated' | 'equal' | 'by-observer'
+  hold?: Record<string, number>
+  conicClass?: 'any' | 'ellipse' | 'parabola' | 'circle'
+  forces?: 'sun' | 'planets'
+  normalPoints?: boolean
+  thetaEquinox?: number
+  shortestPeriodYr?: number
+  sigmaScale?: number
+  /** Plane: the diameter, arcmin, that the body shows at r = 1 unit. */
+  diameterScaleArcmin?: number
+  /** Plane: name of the unit of r, for units in the result; default 'unit'. */
+  radiusUnit?: string
+  seed?: number
+}
+
+/** An earlier result's regular parameters, to refit from instead of searching blind. */
+export interface FitStart {
+  state: FitState
+}
+
+export type FitRequest =
+  | { kind: 'relative'; measures: RelativeMeasure[]; settings?: FitSettings; start?: FitStart }
+  | { kind: 'plane'; measures: PlaneMeasure[]; settings?: FitSettings; start?: FitStart }
+  | { kind: 'equatorial'; measures: MeasureBase[]; settings?: FitSettings; start?: FitStart }
+
+export const PROGRESS_STAGES = ['reading', 'searching', 'polishing', 'judging'] as const
+export interface Progress {
+  stage: (typeof PROGRESS_STAGES)[number]
+  /** 0 to 1 over the whole fit, never falling. */
+  fraction: number
+}
+
+export const STOP_REASONS = [
+  'chi-square-settled', 'step-settled', 'gradient-settled', 'iteration-limit', 'singular', 'exact', 'linear',
+] as const
+export type StopReason = (typeof STOP_REASONS)[number]
+
+export const REFUSAL_CODES = [
+  'no-measures', 'too-few-measures', 'one-epoch', 'one-direction', 'too-many-measures', 'value-out-of-range', 'setting-out-of-range',
+  'setting-not-available', 'kind-not-available', 'no-orbit-found', 'duplicate-id', 'time-limit', 'memory-limit',
+] as const
+export type RefusalCode = (typeof REFUSAL_CODES)[number]
+export interface Refusal {
+  code: RefusalCode
+  /** What is wrong and where, in plain words. */
+  sentence: string
+  /** What would help. */
+  remedy: string
+}
+
+/** A number with its standard error. sigma is the one to publish (formal where every σ was stated, else scaled). */
+export interface Element {
+  value: number
+  sigma: number | null
+  sigmaFormal: number | null
+  sigmaScaled: number | null
+  unit: string
+}
+
+export const CONIC_CLASSES = ['circle', 'ellipse', 'parabola', 'hyperbola'] as const
+export interface Conic {
+  class: (typeof CONIC_CLASSES)[number]
+  semiLatusRectum: Element
+  eccentricity: Element
+  /** P(e < 1); null where the model is bound by construction or no error is known. */
+  probabilityBound: number | null
+  parabolaExcluded: boolean | null
+  circleExcluded: boolean | null
+  /** The same in a sentence for the page, e.g. "Ellipse, bound by construction". */
+  statement: string
+}
+
+/** Constants of motion per unit mass, with the gravitational parameter they were computed with. */
+export interface Constants {
+  gravitationalParameter: Element
+  specificEnergy: Element
+  angularMomentum: Element
+  /** Laplace–Runge–Lenz vector; components in the frame named. */
+  laplaceRungeLenz: { frame: string; components: Element[]; magnitude: Element }
+  /** Largest relative drift of ε, h and A over the measured epochs: a self-check of the arithmetic. */
+  largestDrift: number
+}
+
+export interface Residual {
+  id: string
+  status: 'used' | 'set-aside' | 'not-fitted'
+  /** By coordinate; the keys of the kind: thetaDeg, rhoArcsec, eastArcsec, northArcsec | r, diameterArcmin. */
+  computed: Record<string, number>
+  /** Observed minus computed; null for a coordinate that was not measured. relative adds acrossArcsec (ρΔθ) and alongArcsec (Δρ). */
+  observedMinusComputed: Record<string, number | null>
+  /** Whitened length √Σr² in σ, and the whitened rows themselves. */
+  normalised: number | null
+  rows: number[]
+  weight: number
+  leverage: number | null
+  cook: number | null
+  /** True anomaly and radius in the plane of the orbit (measure carried back onto it); null where not possible. */
+  inOrbitPlane: { trueAnomalyDeg: number; radius: number } | null
+}
+
+export interface Alternative {
+  deltaChiSquare: number
+  elements: Record<string, Element>
+}
+
+export interface Proposal {
+  measureId: string
+  action: 'set-aside' | 'change-quadrant'
+  reason: string
+}
+
+/** Regular parameters: what predict and a refit work from. */
+export interface FitState {
+  model: Model | 'plane'
+  names: string[]
+  values: number[]
+  /** Covariance of values with the errors to publish; null where the problem is singular or exact. */
+  covariance: number[][] | null
+  /** Reference epoch, Julian year (relative); 0 otherwise. */
+  referenceEpochYr: number
+}
+
+export interface FitStatistics {
+  measures: number
+  used: number
+  rows: number
+  parameters: number
+  degreesOfFreedom: number
+  chiSquare: number
+  reducedChiSquare: number | null
+  /** By coordinate with unit: { across: {value, unit} … } */
+  rms: Record<string, { value: number; unit: string }>
+  conditionNumber: number | null
+  /** formal: every σ stated; scaled: none stated; mixed: the median stated was taken for the missing. */
+  errorBasis: 'formal' | 'scaled' | 'mixed'
+  arc: {
+    firstEpochYr: number | null
+    lastEpochYr: number | null
+    /** Span in periods; null where there is no period. */
+    turns: number | null
+    trueAnomalyCoveredDeg: number | null
+    positionAngleCoveredDeg: number | null
+  }
+  byObserver: { observer: string; measures: number; rms: Record<string, number>; bias: Record<string, number> }[]
+}
+
+export interface FitResult {
+  format: 1
+  kind: Kind
+  model: Model
+  engine: { version: string; seed: number }
+  stop: { reason: StopReason; sentence: string; iterations: number }
+  /** null for line and still. */
+  conic: Conic | null
+  elements: Record<string, Element>
+  /** relative: 'ambiguous' without velocities; equinox of Ω. */
+  nodeStatus?: 'ambiguous' | 'ascending'
+  nodeEquinox?: number
+  covariance: { names: string[]; matrix: number[][] } | null
+  constants: Constants | null
+  statistics: FitStatistics
+  residuals: Residual[]
+  alternatives: Alternative[]
+  proposals: Proposal[]
+  warnings: string[]
+  state: FitState
+}
+
+export type FitOutcome = { ok: true; result: FitResult } | { ok: false; refusal: Refusal }
+
+export interface Prediction {
+  /** relative: Julian year; plane: φ in degrees. */
+  at: number
+  values: Record<string, number>
+  /** Same keys as values; null without covariance. */
+  sigmas: Record<string, number | null>
+  correlation: number | null
+}

@@ -1,0 +1,97 @@
+import { z } from 'zod'
+import { KINDS } from '../../fitting/types'
+import { idSchema } from './ids'
+import type { EditionSummary } from './editions'
+import type { FitSummary, FitView } from './fits'
+
+export const kindSchema = z.enum(KINDS)
+
+export const createProgrammeSchema = z.object({
+  name: z.string().trim().min(1).max(120),
+  description: z.string().trim().max(2000).default(''),
+  leastMeasures: z.number().int().min(1).max(10000).default(8),
+  leastObservers: z.number().int().min(1).max(100).default(1),
+  leastArcTurns: z.number().min(0).max(10).default(0),
+})
+
+export const createTargetSchema = z.object({
+  programmeId: idSchema,
+  kind: kindSchema,
+  name: z.string().trim().min(1).max(120),
+  aliases: z.array(z.string().trim().min(1).max(120)).max(50).default([]),
+  componentA: z.string().trim().max(40).nullish(),
+  componentB: z.string().trim().max(40).nullish(),
+  radiusUnit: z.string().trim().min(1).max(20).nullish(),
+  diameterScaleArcmin: z.number().positive().max(1e6).nullish(),
+  caution: z.enum(['none', 'sun']).default('none'),
+  remarks: z.string().trim().max(2000).default(''),
+})
+
+export interface ProgrammeView {
+  id: string
+  name: string
+  description: string
+  leastMeasures: number
+  leastObservers: number
+  leastArcTurns: number
+  coordinators: { id: string; displayName: string }[]
+}
+
+export interface TargetSummary {
+  id: string
+  name: string
+  kind: z.infer<typeof kindSchema>
+  programme: { id: string; name: string }
+  caution: 'none' | 'sun'
+  measures: number
+  observers: number
+  firstEpochYr: number | null
+  lastEpochYr: number | null
+  latestFit: FitSummary | null
+  currentEdition: { number: number; publishedAt: string } | null
+}
+
+/** The sheet of a target. Measures come with the fit shown (FitView.measures), or alone where no fit exists yet. */
+export interface TargetView extends TargetSummary {
+  aliases: string[]
+  componentA: string | null
+  componentB: string | null
+  radiusUnit: string | null
+  diameterScaleArcmin: number | null
+  remarks: string
+  isFollowed: boolean
+  mayCoordinate: boolean
+  mayUpload: boolean
+  fits: FitSummary[]
+  editions: EditionSummary[]
+  /** The fit asked for by ?fit=, else the latest one. */
+  fit: FitView | null
+  /** Standing measures, newest state; what the table shows where no fit exists. */
+  measures: MeasureView[]
+}
+
+/** One measure as pages and downloads show it; only the fields of its kind are there. */
+export interface MeasureView {
+  id: string
+  observer: string
+  batchNumber: number
+  epochYr: number | null
+  timeUtc: string | null
+  thetaDeg: number | null
+  rhoArcsec: number | null
+  rhoLimitArcsec: number | null
+  sigmaThetaDeg: number | null
+  sigmaRhoArcsec: number | null
+  eastArcsec: number | null
+  northArcsec: number | null
+  sigmaEastArcsec: number | null
+  sigmaNorthArcsec: number | null
+  phiDeg: number | null
+  r: number | null
+  sigmaR: number | null
+  diameterArcmin: number | null
+  sigmaDiameterArcmin: number | null
+  nights: number | null
+  method: string | null
+  remarks: string | null
+}
