@@ -77,3 +77,15 @@ export function cbrt(x: number): number {
   t += t * ((quotient - t) / (t + t + quotient))
   return x < 0 ? -t : t
 }
+
+/**
+ * Cube root to 23 bits, for starting values that are polished afterwards.
+ * @param x normal positive double (≥ 2.3e-308), finite.
+ * @returns ∛x within a relative 2e-7; NaN for NaN.
+ * Source: fdlibm 5.3 (Sun Microsystems 1993), s_cbrt.c, polynomial of its FreeBSD revision.
+ */
+export function cbrtRough(x: number): number {
+  const t = withHighWord(0, Math.floor(highWord(x) / 3) + B1)
+  const r = (t * t) * (t / x)
+  return t * ((P0 + r * (P1 + r * P2)) + ((r * r) * r) * (P3 + r * P4))
+}

@@ -31,7 +31,8 @@ function sinNearZero(y: number, tail: number): number {
 
 function cosNearZero(y: number, tail: number): number {
   const z = y * y
-  const r = z * (C1 + z * (C2 + z * C3)) + z * z * z * z * (C4 + z * (C5 + z * C6))
+  const zz = z * z
+  const r = z * (C1 + z * (C2 + z * C3)) + zz * zz * (C4 + z * (C5 + z * C6))
   const half = 0.5 * z
   const w = 1 - half
   return w + (((1 - w) - half) + (z * r - y * tail))
@@ -56,13 +57,10 @@ export function sinCosInto(x: number, out: Float64Array): void {
   const quadrant = reduceToQuadrant(x, reduced)
   const y = reduced[0]!
   const tail = reduced[1]!
-  const s = sinNearZero(y, tail)
-  const c = cosNearZero(y, tail)
-  const isOdd = (quadrant & 1) === 1
-  const sine = isOdd ? c : s
-  const cosine = isOdd ? s : c
-  out[0] = quadrant > 1 ? -sine : sine
-  out[1] = quadrant === 1 || quadrant === 2 ? -cosine : cosine
+  // Quadrants turn (s, c) into (s, c), (c, −s), (−s, −c), (−c, s): places and signs are computed, as branches here are mispredicted.
+  const odd = quadrant & 1
+  out[odd] = sinNearZero(y, tail) * (1 - ((quadrant + 1) & 2))
+  out[odd ^ 1] = cosNearZero(y, tail) * (1 - (quadrant & 2))
 }
 
 /**
