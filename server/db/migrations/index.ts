@@ -1,0 +1,7 @@
+import type { Migration } from 'kysely'
+import * as createTables from './2026-12-01T0900_create_tables'
+
+/** Every migration by name, in order; listed by hand since a bundle cannot read a folder. */
+export const migrations: Record<string, Migration> = {
+  '2026-12-01T0900_create_tables': createTables,
+}
