@@ -1,4 +1,4 @@
-/** Sets the document's title, "page · Semilatus". */
+/** Sets the document's title; the product's name follows it. */
 export function useTitle(title: MaybeRefOrGetter<string>) {
-  useHead({ title: computed(() => `${toValue(title)} · Semilatus`) })
+  useHead({ title: computed(() => toValue(title)) })
 }
