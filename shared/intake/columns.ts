@@ -1,0 +1,89 @@
+import type { Kind } from '../../fitting/types'
+
+/** The canonical columns of a kind, in the order in which a template lists them; the meaning is shown to people. */
+export interface ColumnMeaning {
+  name: MeasureColumn
+  meaning: string
+  /** What a number is in; null for text. */
+  unit: string | null
+}
+
+/** Exactly one of these gives the time of a `relative` measure. */
+export const EPOCH_COLUMNS = ['epoch', 'jd', 'mjd', 'date'] as const
+export type EpochColumn = (typeof EPOCH_COLUMNS)[number]
+
+const RELATIVE_COLUMNS = [
+  ['target', 'name of the pair', null],
+  ['components', 'which components, such as AB', null],
+  ['epoch', 'year; bare years count as Besselian before 1984.0 and as Julian from then on; prefix B or J decides', 'yr'],
+  ['jd', 'Julian date', 'd'],
+  ['mjd', 'modified Julian date', 'd'],
+  ['date', 'date or time, ISO 8601 in UTC', null],
+  ['theta_deg', 'position angle θ from north through east', 'deg'],
+  ['rho_arcsec', 'separation ρ', 'arcsec'],
+  ['sigma_theta_deg', 'standard error of θ', 'deg'],
+  ['sigma_rho_arcsec', 'standard error of ρ', 'arcsec'],
+  ['corr_theta_rho', 'correlation of θ and ρ', '1'],
+  ['east_arcsec', 'offset toward east', 'arcsec'],
+  ['north_arcsec', 'offset toward north', 'arcsec'],
+  ['sigma_east_arcsec', 'standard error toward east', 'arcsec'],
+  ['sigma_north_arcsec', 'standard error toward north', 'arcsec'],
+  ['corr_east_north', 'correlation of east and north', '1'],
+  ['rho_limit_arcsec', 'not resolved: closer than this', 'arcsec'],
+  ['quadrant', 'stated or ambiguous', null],
+  ['theta_frame', 'of_date, ICRS, J2000, B1950 or a year', null],
+  ['nights', 'number of nights in the mean', '1'],
+  ['observer', 'who measured', null],
+  ['station', 'where', null],
+  ['method', 'how', null],
+  ['aperture_m', 'aperture of the telescope', 'm'],
+  ['mag_a', 'magnitude of the first component', 'mag'],
+  ['mag_b', 'magnitude of the second component', 'mag'],
+  ['delta_mag', 'difference of the magnitudes', 'mag'],
+  ['band', 'passband of the magnitudes', null],
+  ['source', 'where it was published', null],
+  ['remarks', 'anything else', null],
+] as const
+
+const PLANE_COLUMNS = [
+  ['target', 'name of the body', null],
+  ['time_utc', 'date or time, ISO 8601 in UTC', null],
+  ['phi_deg', 'direction φ in the plane of the orbit', 'deg'],
+  ['r', 'distance from the focus', "the target's unit"],
+  ['sigma_r', 'standard error of r', "the target's unit"],
+  ['diameter_arcmin', 'apparent diameter', 'arcmin'],
+  ['sigma_diameter_arcmin', 'standard error of the diameter', 'arcmin'],
+  ['observer', 'who measured', null],
+  ['remarks', 'anything else', null],
+] as const
+
+export type MeasureColumn = (typeof RELATIVE_COLUMNS)[number][0] | (typeof PLANE_COLUMNS)[number][0]
+/** The kinds whose measures can be read. */
+export type ReadableKind = 'relative' | 'plane'
+
+const meanings = (rows: readonly (readonly [MeasureColumn, string, string | null])[]): ColumnMeaning[] =>
+  rows.map(([name, meaning, unit]) => ({ name, meaning, unit }))
+
+export const COLUMNS: Record<ReadableKind, readonly ColumnMeaning[]> = {
+  relative: meanings(RELATIVE_COLUMNS),
+  plane: meanings(PLANE_COLUMNS),
+}
+
+/** Columns of `equatorial` that no readable kind has: they tell what a file is about. */
+const EQUATORIAL_MARKS = ['ra_deg', 'ra_hms', 'dec_deg', 'dec_dms']
+
+export function isReadableKind(kind: Kind): kind is ReadableKind {
+  return kind === 'relative' || kind === 'plane'
+}
+
+/** Upper case, hyphens and spaces in a heading do not matter: "Theta deg" is theta_deg. */
+export function canonicalHeading(heading: string): string {
+  return heading.trim().toLowerCase().replace(/[\s-]+/g, '_')
+}
+
+/** What a file is about, by its headings; `relative` where nothing says otherwise. */
+export function guessKind(headings: readonly string[]): Kind {
+  const names = headings.map(canonicalHeading)
+  if (names.includes('phi_deg')) return 'plane'
+  return names.some(name => EQUATORIAL_MARKS.includes(name)) ? 'equatorial' : 'relative'
+}
