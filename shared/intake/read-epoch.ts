@@ -1,15 +1,12 @@
+import { jdFromMjd, julianEpochFromWritten } from '../../fitting/time'
 import { EPOCH_COLUMNS, type EpochColumn } from './columns'
-import { julianYearOfBesselian, julianYearOfIso, julianYearOfJd } from './julian-year'
-import type { RowReader } from './row-reader'
-import { readTime } from './read-time'
-import { EPOCH_SENTENCES } from './sentences'
 import type { Complaint } from './problems'
+import { julianYearOfUtcJd, readTime } from './read-time'
+import type { RowReader } from './row-reader'
+import { EPOCH_SENTENCES } from './sentences'
 
 export const FIRST_YEAR = 1600
 export const LAST_YEAR = 2500
-/** Bare epochs before this year count as Besselian, as was the custom (IAU resolution of 1976). */
-const BESSELIAN_UNTIL = 1984
-const MJD_ZERO_JD = 2_400_000.5
 const SMALLEST_JD = 1_000_000
 
 /** The time of a `relative` measure as a Julian year, from the one column that gives it; null where it was complained of. */
@@ -43,11 +40,9 @@ function isYear(value: number): boolean {
 function readYear(row: RowReader): number | null {
   const written = row.written('epoch')
   if (/^\d{4}-\d/.test(written) || /^\d{1,2}[./]\d{1,2}[./]\d{4}$/.test(written)) return refuse(row, 'epoch', EPOCH_SENTENCES.maybeDate())
-  const prefix = /^[BJ](?=\s*\d)/i.exec(written)?.[0].toUpperCase()
+  const prefix = /^[BJ](?=\s*\d)/i.exec(written)?.[0].toUpperCase() as 'B' | 'J' | undefined
   const year = row.number('epoch', yearRule, prefix ? written.slice(1) : written)
-  if (year === null) return null
-  const isBesselian = prefix === 'B' || (!prefix && year < BESSELIAN_UNTIL)
-  return isBesselian ? julianYearOfBesselian(year) : year
+  return year === null ? null : julianEpochFromWritten(year, prefix)
 }
 
 function yearRule(value: number): Complaint | null {
@@ -57,19 +52,19 @@ function yearRule(value: number): Complaint | null {
 }
 
 function readDayCount(row: RowReader, column: 'jd' | 'mjd'): number | null {
-  const toJd = (value: number) => (column === 'jd' ? value : value + MJD_ZERO_JD)
+  const toJd = (value: number) => (column === 'jd' ? value : jdFromMjd(value))
   const days = row.number(column, (value) => {
     if (isYear(value)) return EPOCH_SENTENCES.yearInDayColumn()
-    if (isYear(julianYearOfJd(toJd(value)))) return null
+    if (isYear(julianYearOfUtcJd(toJd(value)))) return null
     return column === 'jd' ? EPOCH_SENTENCES.jdRange() : EPOCH_SENTENCES.mjdRange()
   })
-  return days === null ? null : julianYearOfJd(toJd(days))
+  return days === null ? null : julianYearOfUtcJd(toJd(days))
 }
 
 function readDate(row: RowReader): number | null {
   const read = readTime(row.written('date'))
   if (!read.ok) return refuse(row, 'date', read.complaint)
-  const epochYr = julianYearOfIso(read.iso)
+  const { epochYr } = read.time
   return isYear(epochYr) ? epochYr : refuse(row, 'date', EPOCH_SENTENCES.yearRange())
 }
 

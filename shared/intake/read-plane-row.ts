@@ -1,4 +1,3 @@
-import { julianYearOfIso } from './julian-year'
 import * as rules from './number-rules'
 import type { ParsedPlaneRow } from './parsed-row'
 import { FIRST_YEAR, LAST_YEAR } from './read-epoch'
@@ -37,11 +36,11 @@ function readOptionalTime(row: RowReader, nowYr?: number): Pick<ParsedPlaneRow, 
     row.complain('time_utc', read.complaint)
     return none
   }
-  const epochYr = julianYearOfIso(read.iso)
+  const { epochYr, iso } = read.time
   if (epochYr < FIRST_YEAR || epochYr > LAST_YEAR) {
     row.complain('time_utc', EPOCH_SENTENCES.yearRange())
     return none
   }
   if (nowYr !== undefined && epochYr > nowYr) row.note('time_utc', EPOCH_SENTENCES.inFuture())
-  return { epochYr, timeUtc: read.iso }
+  return { epochYr, timeUtc: iso }
 }
