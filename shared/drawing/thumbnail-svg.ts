@@ -23,8 +23,8 @@ export function thumbnailSvg(result: FitResult): string | null {
   })
   const focusPx = frame.toPx(focus)
   return `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${WIDTH_PX} ${HEIGHT_PX}" width="${WIDTH_PX}" height="${HEIGHT_PX}" aria-hidden="true" focusable="false">`
-    + `<path class="thumbnail-orbit" d="${pathData(outline, frame.toPx)}" fill="none" stroke="currentColor" stroke-width="2" stroke-linejoin="round" stroke-linecap="round"/>`
-    + `<circle class="thumbnail-focus" cx="${px(focusPx.x)}" cy="${px(focusPx.y)}" r="${FOCUS_RADIUS_PX}" fill="currentColor"/></svg>`
+    + `<path class="orbit" d="${pathData(outline, frame.toPx)}" fill="none" stroke="currentColor" stroke-width="2" stroke-linejoin="round" stroke-linecap="round"/>`
+    + `<circle class="focus" cx="${px(focusPx.x)}" cy="${px(focusPx.y)}" r="${FOCUS_RADIUS_PX}" fill="currentColor"/></svg>`
 }
 
 /**
