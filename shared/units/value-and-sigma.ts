@@ -1,0 +1,63 @@
+import type { Element } from '../../fitting/types'
+import { decimalsOf, formatNumber } from './number-text'
+import { unitSymbol } from './unit-symbol'
+
+/** A value beside its standard error, both with the same decimals: the error keeps two significant digits. */
+export interface ValueAndSigma {
+  value: string
+  /** Without ±; null where no error is known. */
+  sigma: string | null
+}
+
+const SIGMA_DIGITS = 2
+const MOST_DECIMALS = 9
+const DIGITS_WITHOUT_SIGMA = 5
+
+/**
+ * The decimals with which a value and its standard error are written.
+ * @param sigma standard error in the unit of the value; null, 0 or not finite where none is known
+ * @returns decimals so that the error keeps two significant digits, at most 9; null where none is known; below 0 for tens and hundreds
+ */
+export function decimalsForSigma(sigma: number | null): number | null {
+  if (sigma === null || !(sigma > 0) || !Number.isFinite(sigma)) return null
+  return Math.min(MOST_DECIMALS, decimalsOf(Number(sigma.toPrecision(SIGMA_DIGITS)), SIGMA_DIGITS))
+}
+
+/**
+ * Writes a value and its standard error with the same decimals.
+ * @param value in any unit
+ * @param sigma standard error in the same unit; null where none is known
+ * @returns such as { value: "62.41", sigma: "0.38" }; an error below 1e-9 is written "<0.000000001"
+ */
+export function formatValueAndSigma(value: number, sigma: number | null): ValueAndSigma {
+  const decimals = decimalsForSigma(sigma)
+  if (sigma === null || decimals === null) {
+    const size = Math.abs(Number(value.toPrecision(DIGITS_WITHOUT_SIGMA)))
+    const plain = Math.min(MOST_DECIMALS, Math.max(0, decimalsOf(size || 1, DIGITS_WITHOUT_SIGMA)))
+    return { value: formatNumber(value, plain), sigma: null }
+  }
+  const sigmaText = formatNumber(sigma, decimals)
+  return { value: formatNumber(value, decimals), sigma: Number(sigmaText) === 0 ? `<${formatNumber(10 ** -MOST_DECIMALS, MOST_DECIMALS)}` : sigmaText }
+}
+
+/**
+ * Writes an element of a fit in one piece.
+ * @param element value and error to publish, with their unit
+ * @returns such as "62.41 ± 0.38 yr", "78.1 ± 0.4°", "0.482" where no error is known
+ */
+export function formatElement(element: Element): string {
+  const { value, sigma } = formatValueAndSigma(element.value, element.sigma)
+  return withUnit(sigma === null ? value : `${value} ± ${sigma}`, element.unit)
+}
+
+/**
+ * Puts a unit behind a number as the trade does: degrees and arcseconds close up, others after a space.
+ * @param text the number as written
+ * @param unit the unit's name, such as "arcsec"; empty for none
+ * @returns such as "0.861″" or "62.41 yr"
+ */
+export function withUnit(text: string, unit: string): string {
+  const symbol = unitSymbol(unit)
+  if (symbol === '') return text
+  return /^[°′″]/.test(symbol) ? `${text}${symbol}` : `${text} ${symbol}`
+}
