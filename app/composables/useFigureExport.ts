@@ -28,7 +28,11 @@ export function useFigureExport(fileStem: () => string) {
     save(new Blob([csv], { type: 'text/csv;charset=utf-8' }), `${fileStem()}.csv`)
   }
 
-  return { saveSvg, savePng, saveCsv, save: (blob: Blob, ending: string) => save(blob, `${fileStem()}.${ending}`) }
+  function saveAddress(address: string, ending: 'svg' | 'png') {
+    follow(address, `${fileStem()}.${ending}`)
+  }
+
+  return { saveSvg, savePng, saveCsv, saveAddress }
 }
 
 /** A copy that needs no style sheet: what the classes and variables gave stands in presentation attributes, on the sheet's colour. */
@@ -54,7 +58,10 @@ function standaloneSvg(svg: SVGSVGElement): string {
 
 function save(blob: Blob, name: string) {
   const address = URL.createObjectURL(blob)
-  const link = Object.assign(document.createElement('a'), { href: address, download: name })
-  link.click()
+  follow(address, name)
   setTimeout(() => URL.revokeObjectURL(address), 10_000)
+}
+
+function follow(address: string, name: string) {
+  Object.assign(document.createElement('a'), { href: address, download: name }).click()
 }

@@ -55,6 +55,7 @@ export const useEventHub = defineStore('eventHub', () => {
       timer = setTimeout(() => open(openTopics, true), retryMs)
       retryMs = Math.min(retryMs * 2, RETRY_LONGEST_MS)
     }
+    stream.onmessage = deliver
     for (const name of EVENT_NAMES) stream.addEventListener(name, deliver)
   }
 
