@@ -1,23 +1,40 @@
-import { AppError } from '../errors/app-error'
+import { inputInvalid } from '../errors/app-error'
 
 /** How many items a list answers where the caller does not say. */
 export const DEFAULT_LIMIT = 50
+
+export interface PageQuery {
+  cursor?: string | undefined
+  limit?: number | undefined
+}
+
+interface PartTypes {
+  string: string
+  number: number
+}
+type Parts<Kinds extends readonly (keyof PartTypes)[]> = { -readonly [Index in keyof Kinds]: PartTypes[Kinds[Index]] }
 
 /** A cursor is the sort key of the last item answered, opaque to clients. */
 export function encodeCursor(key: readonly (string | number)[]): string {
   return Buffer.from(JSON.stringify(key)).toString('base64url')
 }
 
-/** Throws input-invalid where the text is no cursor of `length` parts. */
-export function decodeCursor(cursor: string, length: number): (string | number)[] {
+/** The sort key in a cursor, its parts of these types. Throws input-invalid for a text that this list never gave out. */
+export function decodeCursor<const Kinds extends readonly (keyof PartTypes)[]>(cursor: string, kinds: Kinds): Parts<Kinds> {
+  const key = parse(cursor)
+  if (!Array.isArray(key) || key.length !== kinds.length || !key.every((part, index) => typeof part === kinds[index])) {
+    throw inputInvalid([{ path: 'cursor', reason: 'is not one that this list gave out; begin again without it' }])
+  }
+  return key as Parts<Kinds>
+}
+
+function parse(cursor: string): unknown {
   try {
-    const key: unknown = JSON.parse(Buffer.from(cursor, 'base64url').toString('utf8'))
-    if (Array.isArray(key) && key.length === length && key.every(part => typeof part === 'string' || typeof part === 'number')) return key
+    return JSON.parse(Buffer.from(cursor, 'base64url').toString('utf8'))
   }
   catch {
-    // answered below, like any other text that is no cursor
+    return null // refused by decodeCursor like any other text that is no cursor
   }
-  throw new AppError('input-invalid', 'The cursor is not one that this list gave out. Begin again without a cursor.', { fields: [{ path: 'cursor', reason: 'is not one that this list gave out' }] })
 }
 
 /** Cuts a page out of `limit + 1` rows: where the extra row came, there is more. */

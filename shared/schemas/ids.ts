@@ -3,6 +3,7 @@ import { z } from 'zod'
 /** 128 random bits as 26 base-32 letters (a–z, 2–7). */
 export const idSchema = z.string().regex(/^[a-z2-7]{26}$/, 'an id of 26 letters a–z or digits 2–7')
 export type Id = z.infer<typeof idSchema>
+export const idParamsSchema = z.object({ id: idSchema })
 
 export interface Page<Item> {
   items: Item[]

@@ -19,6 +19,9 @@ export const changeRolesSchema = z.object({
   isAdministrator: z.boolean(),
   coordinatorOf: z.array(idSchema).max(200),
 })
+export const changeNameSchema = z.object({ displayName: displayNameSchema })
+/** The secret of an invitation's link. */
+export const invitationParamsSchema = z.object({ token: z.string().min(1).max(200) })
 export const changePasswordSchema = z.object({ currentPassword: z.string().min(1), newPassword: passwordSchema })
 
 /** The signed-in person as policies see them; null stands for a visitor. */
