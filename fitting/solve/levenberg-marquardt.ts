@@ -64,7 +64,7 @@ class Iterate {
   readonly residuals: Float64Array
   readonly jacobian: Float64Array
   chiSquare = Infinity
-  scale = new Float64Array(0)
+  scale: Float64Array = new Float64Array(0)
   reduced: TriangularFactor = { factor: new Float64Array(0), rotated: new Float64Array(0) }
 
   constructor(

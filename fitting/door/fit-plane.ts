@@ -1,0 +1,93 @@
+/** A conic from directions and distances in its plane, from request to result. */
+import { atan2, hypot } from '../elementary'
+import { planeProblem, PLANE_NAMES, parabolaProblem, reciprocalProblem } from '../models/plane'
+import { preparePlanePoints, rescalePlanePoints, type PlanePoints } from '../models/plane-measure'
+import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
+import type { FitResult, FitSettings, FitStart, PlaneMeasure } from '../types'
+import { judgePlane } from './judge-plane'
+import type { Report } from './progress'
+import { refuse } from './refusal'
+import { validatePlane } from './validate-measures'
+
+export interface PlaneRequest {
+  measures: PlaneMeasure[]
+  settings: FitSettings
+  start?: FitStart
+  report: Report
+}
+
+/** Directions closer than this count as one, rad (0.2″). */
+const SAME_DIRECTION_RAD = 1e-6
+const START_SHRINK = 0.9
+
+function checkEnough(points: PlanePoints, settings: FitSettings): void {
+  const { used } = points
+  if (used.length < PLANE_NAMES.length) refuse('too-few-measures', `A conic has 3 unknowns; ${used.length} measures are used.`, 'Use at least three measures in different directions.')
+  const directions = used.map((point) => point.phiRad)
+  const distinct = directions.filter((phi, i) => directions.slice(0, i).every((other) => !isSameDirection(phi, other))).length
+  if (distinct === 1) refuse('one-direction', 'All used measures lie in one direction: nothing shows the shape.', 'Add measures in other directions.')
+  if (distinct < PLANE_NAMES.length) refuse('too-few-measures', `The used measures lie in ${distinct} directions; a conic needs three.`, 'Add measures in other directions.')
+  const coordinates = new Set(used.map((point) => point.coordinate))
+  if (coordinates.size > 1 && settings.diameterScaleArcmin === undefined) {
+    refuse('setting-out-of-range', 'Distances and apparent diameters stand together, but no scale links them.', 'Give diameterScaleArcmin, the diameter in arcmin at a distance of one unit.')
+  }
+}
+
+function isSameDirection(a: number, b: number): boolean {
+  const turns = (a - b) / 6.283185307179586
+  return Math.abs(turns - Math.round(turns)) * 6.283185307179586 < SAME_DIRECTION_RAD
+}
+
+/** Shrinks e until the start is defined at every measured direction. */
+function insideDomain(points: PlanePoints, start: Float64Array): Float64Array {
+  const problem = planeProblem(points.used, points.diameterScale)
+  const residuals = new Float64Array(problem.rows)
+  const shrunk = Float64Array.from(start)
+  for (let i = 0; i < 200 && !problem.evaluate(shrunk, residuals, null); i++) {
+    shrunk[1] = shrunk[1]! * START_SHRINK
+    shrunk[2] = shrunk[2]! * START_SHRINK
+  }
+  return shrunk
+}
+
+function startOf(points: PlanePoints, start: FitStart | undefined): Float64Array {
+  if (start) return insideDomain(points, Float64Array.from(start.state.values))
+  const linear = solveLeastSquares(reciprocalProblem(points.used), [1 / points.used[0]!.r, 0, 0]).values
+  if (linear[0]! > 0) return insideDomain(points, Float64Array.of(1 / linear[0]!, linear[1]! / linear[0]!, linear[2]! / linear[0]!))
+  const mean = points.used.reduce((sum, point) => sum + point.r, 0) / points.used.length
+  return Float64Array.of(mean, 0, 0)
+}
+
+/** χ² with e = 1 held; null where no parabola reaches every measured direction. */
+function parabolaChiSquare(points: PlanePoints, solution: Solution): number | null {
+  const problem = parabolaProblem(points.used, points.diameterScale)
+  const residuals = new Float64Array(problem.rows)
+  const start = Float64Array.of(solution.values[0]!, atan2(solution.values[2]!, solution.values[1]!))
+  if (!problem.evaluate(start, residuals, null)) return null
+  return solveLeastSquares(problem, start).chiSquare
+}
+
+/**
+ * Fits a conic in its plane.
+ * @param request with checked list and settings.
+ * @returns the whole result.
+ * @throws RefusedRequest where values are out of range or the measures do not suffice.
+ */
+export function fitPlane(request: PlaneRequest): FitResult {
+  const { measures, settings, start, report } = request
+  validatePlane(measures)
+  const prepared = preparePlanePoints(measures, settings)
+  checkEnough(prepared, settings)
+  report('reading', 1)
+  const first = solveLeastSquares(planeProblem(prepared.used, prepared.diameterScale), startOf(prepared, start))
+  report('polishing', 1)
+  const degrees = prepared.used.length - PLANE_NAMES.length
+  const factor = degrees > 0 ? Math.sqrt(first.chiSquare / degrees) : 0
+  const isEstimated = prepared.basis === 'scaled' && factor > 1e-9
+  const points = isEstimated ? rescalePlanePoints(prepared, factor) : prepared
+  const solution = isEstimated ? solveLeastSquares(planeProblem(points.used, points.diameterScale), first.values) : first
+  if (!(hypot(solution.values[1]!, solution.values[2]!) < 1e6)) refuse('no-orbit-found', 'The distances fit no conic about this focus.', 'Check units and directions of the measures.')
+  const result = judgePlane({ points, solution, settings, parabolaChiSquare: parabolaChiSquare(points, solution) })
+  report('judging', 1)
+  return result
+}

@@ -1,0 +1,144 @@
+/** From the solutions of a relative fit to its result: elements, errors, residuals, alternatives, warnings. */
+import { keplerPath, LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
+import type { SkyMeasures } from '../models/sky-measure'
+import { isSameMinimum } from '../search/polish'
+import type { SettledPath } from '../search/settle-path'
+import { covarianceOf } from '../solve/covariance'
+import type { Alternative, Element, FitResult, FitSettings, FitStatistics } from '../types'
+import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
+import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
+import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
+import { carryBackOf, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
+import { relativeWarnings } from '../uncertainty/relative-warnings'
+import { skyResidual } from '../uncertainty/sky-residuals'
+import { ENGINE_VERSION } from '../version'
+import { stopSentence } from './stop-sentence'
+
+/** Coordinates whose scatter is reported. */
+export const SKY_UNITS = {
+  acrossArcsec: 'arcsec', alongArcsec: 'arcsec', thetaDeg: 'deg', rhoArcsec: 'arcsec', eastArcsec: 'arcsec', northArcsec: 'arcsec',
+} as const
+
+export interface Judgement {
+  /** Best first, at least one. */
+  solutions: SettledPath[]
+  measures: SkyMeasures
+  referenceEpochYr: number
+  settings: FitSettings
+  alternativeWithin: number
+}
+
+/** Multiplies a covariance of unit variance to the errors that are published. */
+export function publishedCovariance(matrix: number[][] | null, published: number | null): number[][] | null {
+  return matrix === null || published === null ? null : matrix.map((row) => row.map((value) => value * published * published))
+}
+
+function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { conditionNumber: number } {
+  const { jacobian, residuals, values, chiSquare } = settled.solution
+  const { matrix, conditionNumber } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
+  return { covariance: matrix, conditionNumber, scale: errorScale(measures.basis, chiSquare, residuals.length - values.length) }
+}
+
+function publishedElements(elements: RelativeElements, errors: Errors): Record<string, Element> {
+  const published: Record<string, Element> = {}
+  for (const name of ELEMENT_NAMES) published[name] = elementOf(elements.quantities[name], errors.covariance, errors.scale)
+  published.nextPeriastronTime = elementOf(elements.nextPeriastron, errors.covariance, errors.scale)
+  return published
+}
+
+/** Covariance of the published elements, with the errors to publish; null where any is not determined. */
+function elementCovariance(elements: RelativeElements, errors: Errors): FitResult['covariance'] {
+  const matrix = publishedCovariance(errors.covariance, errors.scale.published)
+  if (matrix === null) return null
+  const gradients = ELEMENT_NAMES.map((name) => elements.quantities[name].gradient)
+  const rows = gradients.map((g) => gradients.map((h) => quadraticForm(matrix, g, h)))
+  return rows.every((row) => row.every((value) => value - value === 0)) ? { names: [...ELEMENT_NAMES], matrix: rows } : null
+}
+
+function alternativesOf(judgement: Judgement, scaleSquared: number, lastEpochYr: number): Alternative[] {
+  const { solutions, measures, referenceEpochYr, alternativeWithin } = judgement
+  const best = solutions[0]!
+  const kept: SettledPath[] = []
+  for (const settled of solutions.slice(1)) {
+    const isNew = [best, ...kept].every((other) => !isSameMinimum(other.solution.values, settled.solution.values))
+    const isMinimum = settled.solution.reason !== 'iteration-limit' && settled.solution.reason !== 'singular'
+    if (isNew && isMinimum && settled.solution.chiSquare - best.solution.chiSquare < alternativeWithin * scaleSquared) kept.push(settled)
+  }
+  return kept.map((settled) => {
+    const errors = errorsOf(settled, measures)
+    const elements = relativeElements({ values: settled.solution.values, covariance: errors.covariance, referenceEpochYr, lastEpochYr })
+    return {
+      deltaChiSquare: (settled.solution.chiSquare - best.solution.chiSquare) / scaleSquared,
+      elements: publishedElements(elements, errors),
+    }
+  })
+}
+
+function statisticsOf(judgement: Judgement, errors: { conditionNumber: number }, elements: RelativeElements): Omit<FitStatistics, 'rms' | 'byObserver'> {
+  const { measures, solutions } = judgement
+  const { chiSquare, residuals, values } = solutions[0]!.solution
+  const degreesOfFreedom = residuals.length - values.length
+  const { used } = measures
+  return {
+    measures: measures.all.length,
+    used: used.length,
+    rows: residuals.length,
+    parameters: values.length,
+    degreesOfFreedom,
+    chiSquare,
+    reducedChiSquare: degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null,
+    conditionNumber: errors.conditionNumber < Infinity ? errors.conditionNumber : null,
+    errorBasis: measures.basis,
+    arc: relativeArc(elements, used[0]!.epochYr, used[used.length - 1]!.epochYr),
+  }
+}
+
+/**
+ * Judges a relative fit.
+ * @param judgement solutions best first, measures with their errors, reference epoch (Julian year).
+ * @returns the result that leaves the door.
+ */
+export function judgeRelative(judgement: Judgement): FitResult {
+  const { solutions, measures, referenceEpochYr, settings } = judgement
+  const { solution, iterations } = solutions[0]!
+  const { used } = measures
+  const lastEpochYr = used[used.length - 1]!.epochYr
+  const errors = errorsOf(solutions[0]!, measures)
+  const elements = relativeElements({ values: solution.values, covariance: errors.covariance, referenceEpochYr, lastEpochYr })
+  const partial = statisticsOf(judgement, errors, elements)
+  const residuals = measures.all.map((measure) => skyResidual(measure, {
+    path: keplerPath(referenceEpochYr), values: solution.values, covariance: errors.covariance,
+    scaleSquared: partial.reducedChiSquare, carryBack: carryBackOf(elements),
+  }))
+  const statistics: FitStatistics = {
+    ...partial,
+    rms: rmsByCoordinate(residuals, SKY_UNITS),
+    byObserver: statisticsByObserver(residuals, measures.all.map((measure) => measure.observer), Object.keys(SKY_UNITS)),
+  }
+  const conic = relativeConic(elements, errors)
+  const published = publishedElements(elements, errors)
+  const alternatives = alternativesOf(judgement, Math.max(1, partial.reducedChiSquare ?? 1), lastEpochYr)
+  const isAtLimit = solution.values[1]! * solution.values[1]! + solution.values[2]! * solution.values[2]! > 0.95 * LARGEST_S * LARGEST_S
+  return {
+    format: 1,
+    kind: 'relative',
+    model: 'kepler',
+    engine: { version: ENGINE_VERSION, seed: settings.seed ?? 1 },
+    stop: { reason: solution.reason, sentence: stopSentence(solution.reason), iterations },
+    conic,
+    elements: published,
+    nodeStatus: 'ambiguous',
+    nodeEquinox: settings.thetaEquinox ?? 2000,
+    covariance: elementCovariance(elements, errors),
+    constants: relativeConstants(elements, errors, used.map((measure) => measure.epochYr)),
+    statistics,
+    residuals,
+    alternatives,
+    proposals: [],
+    warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit }),
+    state: {
+      model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),
+      covariance: publishedCovariance(errors.covariance, errors.scale.published), referenceEpochYr,
+    },
+  }
+}

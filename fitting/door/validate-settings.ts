@@ -1,0 +1,69 @@
+/** Settings are served or refused; none is ignored. */
+import type { FitSettings, Kind } from '../types'
+import { refuse } from './refusal'
+
+const LATER = 'Leave the setting out, or give its default.'
+
+/** Settings of which only the default is served so far, with that default. */
+const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
+  loss: 'squares', conicClass: 'any', forces: 'sun', normalPoints: false, thetaEquinox: 2000,
+}
+
+/** Settings that have a meaning, by kind. */
+const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
+  relative: ['model', 'weights', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  plane: ['model', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  equatorial: [],
+}
+
+const CHOICES: Partial<Record<keyof FitSettings, readonly unknown[]>> = {
+  model: ['kepler', 'line', 'still'], loss: ['squares', 'huber', 'biweight'], weights: ['stated', 'equal', 'by-observer'],
+  conicClass: ['any', 'ellipse', 'parabola', 'circle'], forces: ['sun', 'planets'], normalPoints: [true, false],
+}
+
+/** Finite number above the lower bound and up to the upper. */
+const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
+  shortestPeriodYr: [0, 1e6], sigmaScale: [0, 1e6], diameterScaleArcmin: [0, 1e9], seed: [-1, 4294967295], thetaEquinox: [1599, 2500],
+}
+
+/** Served models and weights of this engine version. */
+const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler'], plane: ['kepler'], equatorial: [] }
+const WEIGHTS: readonly string[] = ['stated', 'equal']
+
+function checkValue(name: keyof FitSettings, value: unknown): void {
+  const choices = CHOICES[name]
+  if (choices && !choices.includes(value)) refuse('setting-out-of-range', `The setting ${name} has a value that is not known.`, `Give one of: ${choices.join(', ')}.`)
+  const range = RANGES[name]
+  if (range && !(typeof value === 'number' && value > range[0] && value <= range[1])) {
+    refuse('setting-out-of-range', `The setting ${name} is not a number above ${range[0]} and up to ${range[1]}.`, 'Give a number inside that range.')
+  }
+  if (name === 'radiusUnit' && (typeof value !== 'string' || value.length === 0 || value.length > 40)) {
+    refuse('setting-out-of-range', 'The setting radiusUnit is not a name of 1 to 40 characters.', 'Name the unit of r, for example au.')
+  }
+}
+
+/**
+ * Refuses settings that are out of range, unknown or not served.
+ * @param kind of the request.
+ * @param settings as given.
+ * @throws RefusedRequest 'setting-out-of-range' or 'setting-not-available'.
+ */
+export function validateSettings(kind: Kind, settings: FitSettings): void {
+  if (typeof settings !== 'object' || settings === null) refuse('setting-out-of-range', 'The settings are not a set of named values.', 'Leave them out, or give an object.')
+  for (const name of Object.keys(settings) as (keyof FitSettings)[]) {
+    const value = settings[name]
+    if (value === undefined) continue
+    if (name === 'hold') refuse('setting-not-available', 'Holding elements at given values is not available in this version of the engine.', LATER)
+    if (!SERVED[kind].includes(name)) refuse('setting-not-available', `The setting ${String(name).slice(0, 40)} is not available for ${kind} fits.`, LATER)
+    checkValue(name, value)
+    if (name in DEFAULT_ONLY && value !== DEFAULT_ONLY[name]) {
+      refuse('setting-not-available', `The setting ${name} = ${String(value)} is not available in this version of the engine.`, LATER)
+    }
+  }
+  if (settings.model !== undefined && !MODELS[kind].includes(settings.model)) {
+    refuse('setting-not-available', `The model ${settings.model} is not available for ${kind} fits.`, LATER)
+  }
+  if (settings.weights !== undefined && !WEIGHTS.includes(settings.weights)) {
+    refuse('setting-not-available', `The weights ${settings.weights} are not available in this version of the engine.`, LATER)
+  }
+}

@@ -1,0 +1,113 @@
+/**
+ * A conic in its own plane, without times: r(φ) = p / (1 + k cos φ + h sin φ), k = e cos φ₀, h = e sin φ₀, any e ≥ 0.
+ * Start: weighted linear fit of 1/r = α + β cos φ + γ sin φ (weights r⁴/σ²), p = 1/α, k = β/α, h = γ/α.
+ * A measured diameter d = c/r is linear in (1/p, k/p, h/p) and enters as itself, so its error stays symmetric.
+ * Defined where p > 0 and 1 + k cos φ + h sin φ > 0 at every measured direction (one side of the asymptotes).
+ */
+import { cos, sin } from '../elementary'
+import type { LeastSquaresProblem } from '../solve/levenberg-marquardt'
+import type { PlanePoint } from './plane-measure'
+
+/** Names of the regular parameters, in order. */
+export const PLANE_NAMES = ['semiLatusRectum', 'k', 'h'] as const
+
+interface PreparedPoint {
+  cosine: number
+  sine: number
+  isDiameter: boolean
+  value: number
+  /** √weight / σ. */
+  whitening: number
+  scale: number
+}
+
+function prepare(points: readonly PlanePoint[], diameterScale: number | null): PreparedPoint[] {
+  return points.map((point) => ({
+    cosine: cos(point.phiRad), sine: sin(point.phiRad), isDiameter: point.coordinate === 'diameterArcmin',
+    value: point.value, whitening: Math.sqrt(point.weight) / point.sigma, scale: diameterScale ?? 1,
+  }))
+}
+
+/**
+ * Whitened problem of a conic in (p, k, h).
+ * @param points used measures with errors.
+ * @param diameterScale c, where diameters were measured.
+ * @returns a problem with analytic Jacobian.
+ */
+export function planeProblem(points: readonly PlanePoint[], diameterScale: number | null): LeastSquaresProblem {
+  const prepared = prepare(points, diameterScale)
+  return {
+    parameters: 3,
+    rows: points.length,
+    evaluate(values, residuals, jacobian) {
+      const p = values[0]!
+      if (!(p > 0)) return false
+      for (let i = 0; i < prepared.length; i++) {
+        const { cosine, sine, isDiameter, value, whitening, scale } = prepared[i]!
+        const denominator = 1 + values[1]! * cosine + values[2]! * sine
+        if (!(denominator > 0)) return false
+        const model = isDiameter ? (scale * denominator) / p : p / denominator
+        residuals[i] = (model - value) * whitening
+        if (!jacobian) continue
+        const byShape = isDiameter ? scale / p : -p / (denominator * denominator)
+        jacobian[3 * i] = (isDiameter ? -model / p : 1 / denominator) * whitening
+        jacobian[3 * i + 1] = byShape * cosine * whitening
+        jacobian[3 * i + 2] = byShape * sine * whitening
+      }
+      return true
+    },
+  }
+}
+
+/** The linear problem of 1/r in (α, β, γ), for the start. */
+export function reciprocalProblem(points: readonly PlanePoint[]): LeastSquaresProblem {
+  const prepared = points.map((point) => {
+    const sigmaR = point.coordinate === 'r' ? point.sigma : (point.r * point.sigma) / point.value
+    return { cosine: cos(point.phiRad), sine: sin(point.phiRad), reciprocal: 1 / point.r, whitening: (Math.sqrt(point.weight) * point.r * point.r) / sigmaR }
+  })
+  return {
+    parameters: 3,
+    rows: points.length,
+    evaluate(values, residuals, jacobian) {
+      prepared.forEach(({ cosine, sine, reciprocal, whitening }, i) => {
+        residuals[i] = (values[0]! + values[1]! * cosine + values[2]! * sine - reciprocal) * whitening
+        if (jacobian) {
+          jacobian[3 * i] = whitening
+          jacobian[3 * i + 1] = cosine * whitening
+          jacobian[3 * i + 2] = sine * whitening
+        }
+      })
+      return true
+    },
+  }
+}
+
+/**
+ * The same conic with e = 1 held, in (p, φ₀): for the test of the parabola.
+ * @param points used measures with errors.
+ * @param diameterScale c, where diameters were measured.
+ * @returns a problem of two parameters.
+ */
+export function parabolaProblem(points: readonly PlanePoint[], diameterScale: number | null): LeastSquaresProblem {
+  const full = planeProblem(points, diameterScale)
+  const inner = new Float64Array(3)
+  const wide = new Float64Array(3 * full.rows)
+  return {
+    parameters: 2,
+    rows: full.rows,
+    evaluate(values, residuals, jacobian) {
+      const c = cos(values[1]!)
+      const s = sin(values[1]!)
+      inner[0] = values[0]!
+      inner[1] = c
+      inner[2] = s
+      if (!full.evaluate(inner, residuals, jacobian ? wide : null)) return false
+      if (!jacobian) return true
+      for (let i = 0; i < full.rows; i++) {
+        jacobian[2 * i] = wide[3 * i]!
+        jacobian[2 * i + 1] = -s * wide[3 * i + 1]! + c * wide[3 * i + 2]!
+      }
+      return true
+    },
+  }
+}

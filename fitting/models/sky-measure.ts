@@ -1,0 +1,178 @@
+/**
+ * Measures of a relative orbit made ready for the fit: sorted, with every error resolved.
+ * Errors: where every used measure states its σ they are taken as stated (formal); where none does, all weigh alike: one σ in
+ * arcsec, the same along and across (scaled); in a mixture the missing take the median stated (mixed).
+ */
+import { atan2, hypot } from '../elementary'
+import type { FitSettings, FitStatistics, RelativeMeasure } from '../types'
+
+/** One measure with its errors; positions in arcsec, x = north, y = east. */
+export interface SkyMeasure {
+  id: string
+  observer: string
+  epochYr: number
+  form: 'polar' | 'rectangular' | 'theta' | 'rho' | 'limit'
+  status: 'used' | 'set-aside' | 'not-fitted'
+  isAmbiguous: boolean
+  /** Observed θ and ρ (of a rectangular measure: computed from it); NaN where not measured. */
+  thetaRad: number
+  rhoArcsec: number
+  north: number
+  east: number
+  sigmaAlong: number
+  sigmaThetaRad: number
+  sigmaNorth: number
+  sigmaEast: number
+  correlation: number
+  weight: number
+}
+
+export type ErrorBasis = FitStatistics['errorBasis']
+
+/** All measures of a request, sorted by epoch, observer, station, id. */
+export interface SkyMeasures {
+  all: SkyMeasure[]
+  used: SkyMeasure[]
+  basis: ErrorBasis
+}
+
+/** Errors of equal weight stand for this part of the median separation until the residuals tell. */
+const PROVISIONAL_SIGMA_PART = 0.01
+
+function compareText(a: string, b: string): number {
+  return a < b ? -1 : a > b ? 1 : 0
+}
+
+/**
+ * Order of every sum: epoch, observer, station, id.
+ * @param a first measure; a missing epoch counts as 0.
+ * @param b second measure.
+ * @returns negative, zero or positive, by code units and independent of locale.
+ */
+export function compareMeasures(
+  a: { epochYr?: number; observer: string; station?: string; id: string },
+  b: { epochYr?: number; observer: string; station?: string; id: string },
+): number {
+  return (a.epochYr ?? 0) - (b.epochYr ?? 0) || compareText(a.observer, b.observer)
+    || compareText(a.station ?? '', b.station ?? '') || compareText(a.id, b.id)
+}
+
+/**
+ * Median of finite numbers.
+ * @param values at least one finite number.
+ * @returns the middle value, or the mean of the two middle ones; NaN for none.
+ */
+export function median(values: readonly number[]): number {
+  const sorted = [...values].sort((a, b) => a - b)
+  const middle = Math.floor(sorted.length / 2)
+  if (sorted.length === 0) return NaN
+  return sorted.length % 2 === 1 ? sorted[middle]! : (sorted[middle - 1]! + sorted[middle]!) / 2
+}
+
+function statusOf(measure: RelativeMeasure): SkyMeasure['status'] {
+  if (measure.position.form === 'limit') return 'not-fitted'
+  return measure.setAside === true ? 'set-aside' : 'used'
+}
+
+/** The measure with its stated errors; missing ones are NaN. */
+function withStatedErrors(measure: RelativeMeasure): SkyMeasure {
+  const { position } = measure
+  const base = {
+    id: measure.id, observer: measure.observer, epochYr: measure.epochYr, status: statusOf(measure), isAmbiguous: false,
+    thetaRad: NaN, rhoArcsec: NaN, north: NaN, east: NaN, sigmaAlong: NaN, sigmaThetaRad: NaN, sigmaNorth: NaN, sigmaEast: NaN,
+    correlation: 0, weight: measure.weightFactor ?? 1,
+  }
+  if (position.form === 'limit') return { ...base, form: 'limit', rhoArcsec: position.rhoLimitArcsec }
+  if (position.form === 'rectangular') {
+    const { northArcsec: north, eastArcsec: east } = position
+    return {
+      ...base, form: 'rectangular', north, east, thetaRad: atan2(east, north), rhoArcsec: hypot(north, east),
+      sigmaNorth: position.sigmaNorthArcsec ?? NaN, sigmaEast: position.sigmaEastArcsec ?? NaN, correlation: position.correlation ?? 0,
+    }
+  }
+  const form = position.rhoArcsec === undefined ? 'theta' : position.thetaRad === undefined ? 'rho' : 'polar'
+  return {
+    ...base, form, thetaRad: position.thetaRad ?? NaN, rhoArcsec: position.rhoArcsec ?? NaN,
+    sigmaAlong: position.sigmaRhoArcsec ?? NaN, sigmaThetaRad: position.sigmaThetaRad ?? NaN,
+    correlation: form === 'polar' ? (position.correlation ?? 0) : 0, isAmbiguous: position.quadrant === 'ambiguous',
+  }
+}
+
+/** The errors a measure needs for its rows, stated or NaN. */
+function neededErrors(m: SkyMeasure): number[] {
+  if (m.form === 'rectangular') return [m.sigmaNorth, m.sigmaEast]
+  if (m.form === 'theta') return [m.sigmaThetaRad]
+  if (m.form === 'rho') return [m.sigmaAlong]
+  return m.form === 'polar' ? [m.sigmaAlong, m.sigmaThetaRad] : []
+}
+
+const isStated = (value: number) => value === value
+
+function withEqualErrors(m: SkyMeasure, sigmaArcsec: number, medianRho: number): SkyMeasure {
+  const rho = m.rhoArcsec > 0 ? m.rhoArcsec : medianRho
+  return { ...m, sigmaAlong: sigmaArcsec, sigmaThetaRad: sigmaArcsec / rho, sigmaNorth: sigmaArcsec, sigmaEast: sigmaArcsec, correlation: 0 }
+}
+
+/** Median stated errors, arcsec; each falls back to the other. */
+function medianErrors(used: SkyMeasure[], medianRho: number): { along: number; across: number } {
+  const rectangular = used.flatMap((m) => [m.sigmaNorth, m.sigmaEast])
+  const along = median([...used.map((m) => m.sigmaAlong), ...rectangular].filter(isStated))
+  const across = median([...used.map((m) => m.sigmaThetaRad * (m.rhoArcsec > 0 ? m.rhoArcsec : medianRho)), ...rectangular].filter(isStated))
+  return { along: isStated(along) ? along : across, across: isStated(across) ? across : along }
+}
+
+function withMissingErrors(m: SkyMeasure, errors: { along: number; across: number }, medianRho: number): SkyMeasure {
+  const fill = (value: number, instead: number) => (isStated(value) ? value : instead)
+  const both = (errors.along + errors.across) / 2
+  return {
+    ...m,
+    sigmaAlong: fill(m.sigmaAlong, errors.along),
+    sigmaThetaRad: fill(m.sigmaThetaRad, errors.across / (m.rhoArcsec > 0 ? m.rhoArcsec : medianRho)),
+    sigmaNorth: fill(m.sigmaNorth, both),
+    sigmaEast: fill(m.sigmaEast, both),
+  }
+}
+
+function scaleErrors(m: SkyMeasure, factor: number): SkyMeasure {
+  return {
+    ...m, sigmaAlong: m.sigmaAlong * factor, sigmaThetaRad: m.sigmaThetaRad * factor,
+    sigmaNorth: m.sigmaNorth * factor, sigmaEast: m.sigmaEast * factor,
+  }
+}
+
+function basisOf(used: SkyMeasure[], settings: FitSettings): ErrorBasis {
+  if (settings.weights === 'equal') return 'scaled'
+  const errors = used.flatMap(neededErrors)
+  const stated = errors.filter(isStated).length
+  return stated === errors.length ? 'formal' : stated === 0 ? 'scaled' : 'mixed'
+}
+
+/**
+ * Sorts measures and resolves their errors.
+ * @param measures validated; at least one used measure with a separation.
+ * @param settings weights 'stated' (default) or 'equal'; sigmaScale multiplies every error.
+ * @returns all measures and the used ones, both sorted, with the basis of their errors.
+ */
+export function prepareSkyMeasures(measures: readonly RelativeMeasure[], settings: FitSettings): SkyMeasures {
+  const stated = [...measures].sort(compareMeasures).map(withStatedErrors)
+  const used = stated.filter((m) => m.status === 'used')
+  const basis = basisOf(used, settings)
+  const medianRho = median(used.map((m) => m.rhoArcsec).filter((rho) => rho > 0))
+  const errors = medianErrors(used, medianRho)
+  const all = stated.map((m) => {
+    if (basis === 'scaled') return withEqualErrors(m, PROVISIONAL_SIGMA_PART * medianRho, medianRho)
+    return scaleErrors(withMissingErrors(m, errors, medianRho), settings.sigmaScale ?? 1)
+  })
+  return { all, used: all.filter((m) => m.status === 'used'), basis }
+}
+
+/**
+ * Multiplies every error by a factor, as when equal errors are estimated from the residuals.
+ * @param measures as prepared.
+ * @param factor > 0.
+ * @returns the same measures with scaled errors.
+ */
+export function rescaleSkyMeasures(measures: SkyMeasures, factor: number): SkyMeasures {
+  const all = measures.all.map((m) => scaleErrors(m, factor))
+  return { ...measures, all, used: all.filter((m) => m.status === 'used') }
+}
