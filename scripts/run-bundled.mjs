@@ -17,9 +17,10 @@ const LEFT_OUTSIDE = ['better-sqlite3', 'piscina', 'esbuild', 'vite', 'playwrigh
 /** Packages written for `require` ask for Node's own modules by it. */
 const REQUIRE_BANNER = "import { createRequire as __createRequire } from 'node:module'; const require = __createRequire(import.meta.url);"
 
+/** @param {string} scriptPath */
 async function bundle(scriptPath) {
   const { build } = await import('esbuild')
-  const { outputFiles: [output] } = await build({
+  const { outputFiles } = await build({
     entryPoints: [scriptPath],
     bundle: true,
     write: false,
@@ -32,10 +33,14 @@ async function bundle(scriptPath) {
     alias: { '~~': ROOT.replace(/\/$/, ''), '#shared': join(ROOT, 'shared') },
     banner: { js: REQUIRE_BANNER },
   })
-  return output.text
+  return outputFiles.map(output => output.text).join('')
 }
 
-/** The file's name holds the hash of its text, so that two runs at once never overwrite each other. */
+/**
+ * The file's name holds the hash of its text, so that two runs at once never overwrite each other.
+ * @param {string} name
+ * @param {string} text
+ */
 function store(name, text) {
   mkdirSync(CACHE, { recursive: true })
   const hash = createHash('sha256').update(text).digest('hex').slice(0, 16)
@@ -49,6 +54,10 @@ function store(name, text) {
   return file
 }
 
+/**
+ * @param {string} name
+ * @param {string} kept
+ */
 function dropStale(name, kept) {
   for (const entry of readdirSync(CACHE)) {
     const file = join(CACHE, entry)
@@ -64,5 +73,5 @@ if (!scriptArgument) {
 }
 const scriptPath = resolve(ROOT, scriptArgument)
 const file = store(basename(scriptPath, '.ts'), await bundle(scriptPath))
-process.argv = [process.argv[0], scriptPath, ...rest]
+process.argv = [process.execPath, scriptPath, ...rest]
 await import(pathToFileURL(file).href)

@@ -8,7 +8,7 @@ import { matchColumns, type MatchedColumns } from './match-columns'
 import type { ParsedRow, RowCells } from './parsed-row'
 import { fileProblem, RowProblems } from './problems'
 import { readRow } from './read-row'
-import { readTable, type Table, type TableRecord } from './read-table'
+import { filledLength, readTable, type Table, type TableRecord } from './read-table'
 import { FILE_SENTENCES, ROW_SENTENCES } from './sentences'
 
 export interface ReadOptions {
@@ -102,7 +102,7 @@ function readRecord(record: TableRecord, { table, matched, kind, now }: Surround
 
 function shapeProblems(record: TableRecord, expected: { headings: number; other: Delimiter | null; delimiter: Delimiter }): RowProblems {
   const problems = new RowProblems(record.rowNumber)
-  const filled = record.cells.findLastIndex(cell => cell.trim() !== '') + 1
+  const filled = filledLength(record.cells)
   if (expected.other) problems.error(null, record.cells[0] ?? '', ROW_SENTENCES.otherDelimiter(delimiterWord(expected.other), delimiterWord(expected.delimiter)))
   else if (filled > expected.headings) problems.error(null, record.cells[expected.headings] ?? '', ROW_SENTENCES.tooManyCells(record.cells.length, expected.headings))
   else if (record.cells.length < expected.headings) problems.note(null, null, ROW_SENTENCES.tooFewCells(record.cells.length, expected.headings))

@@ -38,19 +38,22 @@ export function readTable(text: string): { ok: true; table: Table } | { ok: fals
     return { ok: false, problem: fileProblem(FILE_SENTENCES.quoteProblem(rowNumber), { rowNumber }) }
   }
   const [names = [], ...rows] = data
+  const headings = names.slice(0, filledLength(names)).map(cell => cell.trim())
   const records = rows
     .map((cells, i) => ({ rowNumber: headerRow + 1 + i, cells }))
     .filter(({ cells }) => cells.some(cell => cell.trim() !== ''))
-  return { ok: true, table: { delimiter: found.delimiter, headerRow, headings: withoutEmptyEnd(names.map(cell => cell.trim())), records } }
+  return { ok: true, table: { delimiter: found.delimiter, headerRow, headings, records } }
 }
 
 function isContent(line: string): boolean {
   return line.trim() !== '' && !line.trimStart().startsWith('#')
 }
 
-function withoutEmptyEnd(cells: string[]): string[] {
-  const last = cells.findLastIndex(cell => cell !== '')
-  return cells.slice(0, last + 1)
+/** How many cells a row has up to the last one with text. */
+export function filledLength(cells: readonly string[]): number {
+  let length = cells.length
+  while (length > 0 && cells[length - 1]!.trim() === '') length--
+  return length
 }
 
 /** True where a row of names is no row of names but the first row of measures. */
