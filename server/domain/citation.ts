@@ -1,5 +1,3 @@
-import { listed } from './wording'
-
 const NAMES_IN_SENTENCE = 8
 
 export interface CitedEdition {
@@ -25,4 +23,9 @@ function creditedNames(names: readonly string[]): string {
   if (names.length === 0) return 'observers who are not named'
   if (names.length <= NAMES_IN_SENTENCE) return listed(names)
   return `${names.slice(0, NAMES_IN_SENTENCE).join(', ')} and ${names.length - NAMES_IN_SENTENCE} others`
+}
+
+/** "A", "A and B", "A, B and C". */
+function listed(names: readonly string[]): string {
+  return names.length === 1 ? names[0]! : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
 }

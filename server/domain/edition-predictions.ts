@@ -13,7 +13,8 @@ export function predictionPlaces(kind: Kind, publishedAt: string): number[] {
   return Array.from({ length: YEARS_AHEAD }, (_, k) => firstYear + k)
 }
 
-/** An open conic has no distance beyond its asymptotes: such directions carry no prediction. */
+/** An open conic has no distance beyond its asymptotes: for such directions the engine answers no values. */
 export function isOnTheCurve(prediction: Prediction): boolean {
-  return Object.values(prediction.values).every(Number.isFinite) && (prediction.values.r ?? 1) > 0
+  const values = Object.values(prediction.values)
+  return values.length > 0 && values.every(Number.isFinite)
 }

@@ -88,7 +88,7 @@ export function ephemerisCsv(snapshot: EditionSnapshot): string {
       { name: snakeCase(name), cell: (prediction: Prediction) => prediction.values[name] },
       { name: `sigma_${snakeCase(name)}`, cell: (prediction: Prediction) => prediction.sigmas[name] },
     ]),
-    ...(names.length > 1 ? [{ name: 'correlation', cell: (prediction: Prediction) => prediction.correlation }] : []),
+    ...(names.includes('thetaDeg') ? [{ name: 'corr_theta_rho', cell: (prediction: Prediction) => prediction.correlation }] : []),
   ]
   return writeCsv(columns, snapshot.predictions)
 }

@@ -1,8 +1,22 @@
+import { z } from 'zod'
 import type { Conic, Element, FitResult, Kind, Prediction } from '../../fitting/types'
 import type { FitMeasureView } from './fits'
+import { idSchema, pageQuerySchema } from './ids'
+import { kindSchema } from './targets'
 
 export const EDITION_STATES = ['published', 'superseded', 'withdrawn'] as const
 export type EditionState = (typeof EDITION_STATES)[number]
+
+/** An edition's place: /orbits/{target id}/{n}. */
+export const editionAddressSchema = z.object({
+  targetId: idSchema,
+  n: z.string().regex(/^[1-9]\d{0,5}$/, 'the number of an edition').transform(Number),
+})
+export const orbitsQuerySchema = pageQuerySchema.extend({
+  /** Part of a name or an alias. */
+  q: z.string().trim().max(120).optional(),
+  kind: kindSchema.optional(),
+})
 
 export interface EditionSummary {
   targetId: string
@@ -37,6 +51,8 @@ export interface EditionSnapshot {
 }
 
 export interface EditionView extends EditionSummary {
+  /** For If-Match when it is withdrawn. */
+  version: number
   snapshot: EditionSnapshot
   whatChanged: string
   conic: Conic | null
