@@ -20,7 +20,7 @@ export interface CalendarDate {
 }
 
 const FIRST_GREGORIAN_JD = 2299160.5
-const FIRST_YEAR = -4712
+const FIRST_YEAR = -4713
 const LAST_YEAR = 9999
 const MONTH_DAYS = [31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31]
 
@@ -31,7 +31,7 @@ function isGregorian(date: CalendarDate, calendar: Calendar): boolean {
 
 /**
  * Whether there is such a date.
- * @param date year −4712 to 9999, month, day with fraction.
+ * @param date year −4713 to 9999, month, day with fraction.
  * @param calendar civil (default) or gregorian.
  * @returns false for a month or day that does not exist, the dropped days 1582 October 5 to 14 (civil) and years out of range.
  * Source: Meeus 1998, Astronomical Algorithms, ch. 7.
@@ -58,7 +58,7 @@ function isLeapYear(year: number, isGregorianYear: boolean): boolean {
 
 /**
  * Julian date of a calendar date.
- * @param date year −4712 to 9999, month, day with fraction.
+ * @param date year −4713 to 9999, month, day with fraction.
  * @param calendar civil (default) or gregorian.
  * @returns JD, d, in the date's own time scale; NaN where there is no such date.
  * Source: Meeus 1998, Astronomical Algorithms, ch. 7.
@@ -100,7 +100,7 @@ function toJulianCount(whole: number): number {
 
 /**
  * Julian epoch of a year with decimals counted through the calendar year (2024.5 is the middle of 2024, a leap year).
- * @param decimalYear −4712 to 9999, civil calendar.
+ * @param decimalYear −4713 to 9999, civil calendar.
  * @returns J, Julian years; NaN outside the range.
  * Source: common practice.
  */
