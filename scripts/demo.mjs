@@ -30,9 +30,7 @@ async function fillDemo(origin) {
     rmSync(DATA, { recursive: true, force: true })
     mkdirSync(DATA, { recursive: true })
   }
-  const { bundle } = await import('./setup/bundle.mjs')
-  const script = await bundle('tests/builders/fill-demo.ts')
-  const child = spawn(process.execPath, [script, DATA, origin, isCurrent ? 'passwords' : 'story'], { cwd: ROOT, stdio: ['pipe', 'pipe', 'inherit'] })
+  const child = spawn(process.execPath, [inRoot('scripts', 'run-bundled.mjs'), 'tests/builders/fill-demo.ts', DATA, origin, isCurrent ? 'passwords' : 'story'], { cwd: ROOT, stdio: ['pipe', 'pipe', 'inherit'] })
   child.stdin.end(JSON.stringify({ passwords: Array.from({ length: 12 }, () => randomBytes(9).toString('base64url')) }))
   let printed = ''
   for await (const chunk of child.stdout) printed += chunk
@@ -88,7 +86,7 @@ async function main() {
     env: {
       SEMILATUS_DATA_DIR: DATA, SEMILATUS_HOST: HOST, SEMILATUS_PORT: String(ports.web), HOST, PORT: String(ports.web),
       SEMILATUS_BASE_URL: origin, NUXT_SESSION_PASSWORD: sessionSecret(DATA),
-      SEMILATUS_MAIL: 'smtp', SEMILATUS_SMTP_HOST: HOST, SEMILATUS_SMTP_PORT: String(ports.smtp),
+      SEMILATUS_MAIL: 'smtp', SEMILATUS_SMTP_HOST: HOST, SEMILATUS_SMTP_PORT: String(ports.smtp), SEMILATUS_SMTP_FROM: 'semilatus@example.org',
     },
   })
   endTogether([server, mailbox])
