@@ -20,6 +20,11 @@ export async function findLivingJobByKey(reads: Reads, uniqueKey: string): Promi
     .executeTakeFirst()
 }
 
+/** The newest job under this key, whatever became of it. */
+export async function findLatestJobByKey(reads: Reads, uniqueKey: string): Promise<JobRow | undefined> {
+  return await reads.selectFrom('job').selectAll().where('unique_key', '=', uniqueKey).orderBy('created_at', 'desc').orderBy('id').limit(1).executeTakeFirst()
+}
+
 /** The oldest job that may run now: queued and due, or running under a lease that has ended. */
 export async function findRunnableJob(reads: Reads, now: string, names: readonly string[]): Promise<JobRow | undefined> {
   return await reads.selectFrom('job').selectAll()

@@ -15,7 +15,8 @@ import type { DatabaseClient } from '../../server/db/client'
 import { migrateToLatest } from '../../server/db/migrate'
 import { getPerson } from '../../server/repositories/person-repository'
 import { actorOf } from '../../server/services/people/actor-of-session'
-import type { MailTransport, OutgoingMail } from '../../server/services/jobs/job-tools'
+import { createCollectingTransport } from '../../server/mail/transports/collecting-transport'
+import type { CollectedMail, CollectingTransport } from '../../server/mail/transports/collecting-transport'
 import { createFakeClock } from './fake-clock'
 import type { FakeClock } from './fake-clock'
 
@@ -26,8 +27,8 @@ export interface TestHouse {
   database: DatabaseClient
   databaseFile: string
   /** What was sent, oldest first. */
-  mail: OutgoingMail[]
-  mailTransport: MailTransport
+  mail: readonly CollectedMail[]
+  mailTransport: CollectingTransport
   /** What was published to open pages, oldest first. */
   events: NumberedEvent[]
   /** The context with this person as actor, with the roles that stand in the database now. */
@@ -45,7 +46,7 @@ export async function createTestHouse({ seed = 'house', startAt = '2026-12-01T20
   const events: NumberedEvent[] = []
   const bus = createEventBus((error) => { throw error })
   bus.subscribe(event => events.push(event))
-  const mail: OutgoingMail[] = []
+  const mailTransport = createCollectingTransport()
   const ctx = createContext({
     db: database.db,
     reads: database.reads,
@@ -61,8 +62,8 @@ export async function createTestHouse({ seed = 'house', startAt = '2026-12-01T20
     clock,
     database,
     databaseFile,
-    mail,
-    mailTransport: { send: async letter => void mail.push(letter) },
+    mail: mailTransport.collected,
+    mailTransport,
     events,
     actAs: async person => actingAs(ctx, actorOf(await getPerson(database.reads, typeof person === 'string' ? person : person.id))),
     async close() {

@@ -12,7 +12,7 @@ export interface Lease {
    * writes; with the lock of that transaction held, what follows is safe.
    */
   assertHeld(tx: Tx): Promise<void>
-  /** Writes progress into the job row (at most every 250 ms) and renews the lease. */
+  /** Writes progress into the job row and renews the lease: a write each, so call it a few times a second at most. */
   reportProgress(fraction: number, stage: string): Promise<void>
 }
 

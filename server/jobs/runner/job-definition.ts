@@ -12,10 +12,15 @@ import type { Lease } from '../contracts/lease'
 export interface JobDefinition<Name extends JobName = JobName> {
   name: Name
   schema: Schema<JobPayload<Name>>
+  /** How many of these one server runs at the same time; 1 by default. */
+  atOnce?: number
   handle(ctx: Context, payload: JobPayload<Name>, lease: Lease, tools: JobTools): Promise<void>
   /** Runs in the transaction that declares the job dead, so that what waits for it is told. */
   onDead?(tx: Tx, ctx: Context, payload: JobPayload<Name>, reason: string): Promise<void>
 }
+
+/** A definition of any name, as lists hold them. */
+export type AnyJobDefinition = { [Name in JobName]: JobDefinition<Name> }[JobName]
 
 /** Keeps the payload's type while the definition is written. */
 export function defineJob<Name extends JobName>(definition: JobDefinition<Name>): JobDefinition<Name> {

@@ -1,20 +1,7 @@
-import type { FitRequest, FitResult, Progress, Refusal } from '../../../fitting/types'
+import type { FitOutcome, FitRequest, Progress } from '../../../fitting/types'
+import type { MailTransport } from '../../mail/outbox/mail-transport'
 
-export type FitOutcome = { ok: true, result: FitResult } | { ok: false, refusal: Refusal }
-
-export interface OutgoingMail {
-  to: string
-  subject: string
-  bodyText: string
-  /** Page that stops such mail, also the address of the one-click header; null for mail that cannot be stopped. */
-  unsubscribeUrl: string | null
-  /** Stays the same over repeated tries, so that a receiver can drop the second copy. */
-  messageId: string
-}
-
-export interface MailTransport {
-  send(mail: OutgoingMail): Promise<void>
-}
+export type { FitOutcome }
 
 /** What job handlers need from outside the house: put together in server/plugins, replaced in tests. */
 export interface JobTools {
