@@ -114,7 +114,7 @@ export type StopReason = (typeof STOP_REASONS)[number]
 
 export const REFUSAL_CODES = [
   'no-measures', 'too-few-measures', 'one-epoch', 'one-direction', 'too-many-measures', 'value-out-of-range', 'setting-out-of-range',
-  'setting-not-available', 'kind-not-available', 'no-orbit-found', 'duplicate-id', 'time-limit', 'memory-limit',
+  'setting-not-available', 'kind-not-available', 'no-orbit-found', 'duplicate-id', 'time-limit', 'memory-limit', 'worker-failed',
 ] as const
 export type RefusalCode = (typeof REFUSAL_CODES)[number]
 export interface Refusal {

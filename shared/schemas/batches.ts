@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { idSchema } from './ids'
+import { idSchema, pageQuerySchema } from './ids'
 import { kindSchema } from './targets'
 
 export const BATCH_STATES = ['draft', 'sent', 'accepted', 'returned', 'declined', 'withdrawn'] as const
@@ -12,6 +12,8 @@ export const uploadQuerySchema = z.object({
   /** Where rows without a `target` column belong. */
   targetId: idSchema.optional(),
 })
+/** Media types in which a file's bytes are taken. */
+export const UPLOAD_TYPES = ['text/csv', 'text/tab-separated-values', 'text/plain', 'application/octet-stream'] as const
 /** Largest file that is taken, bytes. */
 export const UPLOAD_CAP_BYTES = 8 * 1024 * 1024
 /** Most data rows that are read from one file. */
@@ -22,6 +24,11 @@ export const mendRowSchema = z.object({
   cells: z.record(z.string().min(1).max(60), z.string().max(1000)),
 })
 export const chooseTargetSchema = z.object({ targetId: idSchema })
+/** Which of the batch's parts is taken back. */
+export const withdrawBatchSchema = z.object({ targetId: idSchema })
+export const rowParamsSchema = z.object({ id: idSchema, rowId: idSchema })
+/** mine=1 leaves out what others sent to the programmes one coordinates. */
+export const listBatchesQuerySchema = pageQuerySchema.extend({ mine: z.enum(['0', '1']).optional() })
 
 export interface CellProblem {
   rowNumber: number

@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { KINDS } from '../../fitting/types'
-import { idSchema } from './ids'
+import { idSchema, pageQuerySchema } from './ids'
 import type { EditionSummary } from './editions'
 import type { FitSummary, FitView } from './fits'
 
@@ -27,6 +27,15 @@ export const createTargetSchema = z.object({
   remarks: z.string().trim().max(2000).default(''),
 })
 
+export const listTargetsQuerySchema = pageQuerySchema.extend({
+  programmeId: idSchema.optional(),
+  kind: kindSchema.optional(),
+  /** Part of any of a target's names. */
+  q: z.string().trim().max(120).optional(),
+})
+/** The fit to show; the latest where not given. */
+export const readTargetQuerySchema = z.object({ fit: idSchema.optional() })
+
 export interface ProgrammeView {
   id: string
   name: string
@@ -52,7 +61,7 @@ export interface TargetSummary {
 }
 
 /** The sheet of a target. Measures come with the fit shown (FitView.measures), or alone where no fit exists yet. */
-export interface TargetView extends TargetSummary {
+export interface TargetView extends Omit<TargetSummary, 'measures'> {
   aliases: string[]
   componentA: string | null
   componentB: string | null

@@ -1,0 +1,48 @@
+import type { FitResult } from '../../fitting/types'
+
+export interface PublishingRules {
+  leastMeasures: number
+  leastObservers: number
+  leastArcTurns: number
+  needsSecondConsent: boolean
+}
+
+export interface PublishingCase {
+  measuresUsed: number
+  observersUsed: number
+  /** How much of a turn the measures cover; null where nothing says. */
+  arcTurns: number | null
+  /** Coordinators other than the one who accepted, who gave their consent. */
+  consents: number
+}
+
+/** The case a result makes: set-asides do not count, and an arc without times is the share of the directions covered. */
+export function publishingCase(result: FitResult, consents: number): PublishingCase {
+  const { used, arc, byObserver } = result.statistics
+  const coveredDeg = result.kind === 'plane' ? arc.trueAnomalyCoveredDeg : null
+  return {
+    measuresUsed: used,
+    observersUsed: byObserver.filter(o => o.measures > 0).length,
+    arcTurns: arc.turns ?? (coveredDeg === null ? null : coveredDeg / 360),
+    consents,
+  }
+}
+
+/** The rules of the programme that are not met, each in a sentence; empty where publishing is open. */
+export function unmetRules(rules: PublishingRules, found: PublishingCase): string[] {
+  const unmet: string[] = []
+  if (found.measuresUsed < rules.leastMeasures) {
+    unmet.push(`The programme asks for at least ${rules.leastMeasures} measures; ${found.measuresUsed} are used here.`)
+  }
+  if (found.observersUsed < rules.leastObservers) {
+    unmet.push(`The programme asks for at least ${rules.leastObservers} observers; the measures used are by ${found.observersUsed}.`)
+  }
+  if (rules.leastArcTurns > 0 && (found.arcTurns === null || found.arcTurns < rules.leastArcTurns)) {
+    const covered = found.arcTurns === null ? 'how much these cover is not known' : `these cover ${found.arcTurns.toFixed(2)}`
+    unmet.push(`The programme asks for measures over at least ${rules.leastArcTurns} of a turn; ${covered}.`)
+  }
+  if (rules.needsSecondConsent && found.consents < 1) {
+    unmet.push('The programme asks for the consent of a second coordinator; nobody has given it yet.')
+  }
+  return unmet
+}

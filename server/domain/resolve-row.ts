@@ -1,0 +1,97 @@
+import type { Kind } from '../../fitting/types'
+import { duplicateKey } from '../../shared/intake/duplicate-key'
+import { nameKey } from '../../shared/intake/name-key'
+import type { ParsedRow } from '../../shared/intake/parsed-row'
+import { ROW_SENTENCES } from '../../shared/intake/sentences'
+import type { CellProblem } from '../../shared/schemas/batches'
+
+/** A row of a draft as it was read, with what reading it found. */
+export interface DraftRow {
+  id: string
+  rowNumber: number
+  parsed: ParsedRow | null
+  problems: readonly CellProblem[]
+}
+
+export interface KnownTarget {
+  id: string
+  name: string
+  kind: Kind
+}
+
+/** What a row turns out to be among the targets and measures that are here. */
+export interface Resolution {
+  state: 'good' | 'bad' | 'already-here'
+  targetId: string | null
+  problems: CellProblem[]
+}
+
+export interface Surroundings {
+  kind: Kind
+  targetsByNameKey: ReadonlyMap<string, KnownTarget>
+  defaultTarget: KnownTarget | null
+  /** Who is credited where the row names nobody. */
+  ownObserverName: string
+}
+
+export function hasErrors(problems: readonly CellProblem[]): boolean {
+  return problems.some(problem => problem.severity === 'error')
+}
+
+/** The target a row belongs to, or why it belongs to none. */
+export function targetOf(row: DraftRow, around: Surroundings): { target: KnownTarget } | { problem: CellProblem } {
+  const written = row.parsed?.targetName ?? null
+  const target = written === null ? around.defaultTarget : around.targetsByNameKey.get(nameKey(written))
+  const complain = (reason: string, remedy: string) => ({
+    problem: { rowNumber: row.rowNumber, column: 'target', value: written, reason, remedy, severity: 'error' as const },
+  })
+  if (!target && written === null) {
+    return complain('The row names no target, and none was chosen for the file.', 'Choose the target of the whole file, or write its name in the column target.')
+  }
+  if (!target) {
+    return complain(`No target here is called ${written}.`, 'Check the spelling, or ask a coordinator to add this target; then look at the row again.')
+  }
+  if (target.kind !== around.kind) {
+    return complain(`${target.name} takes measures of the kind ${target.kind}, and this file holds the kind ${around.kind}.`, 'Name a target of the same kind, or upload the file as the other kind.')
+  }
+  return { target }
+}
+
+/** By what a row's measure is known to be here already, within its target. */
+export function measureKey(row: ParsedRow, around: Pick<Surroundings, 'ownObserverName'>): string {
+  return duplicateKey(row, row.observerName ?? around.ownObserverName)
+}
+
+/**
+ * Decides on every row in order: bad where it cannot be read or has no target, already here where the target has this very
+ * measure or an earlier row of the batch brings it, good otherwise.
+ */
+export function resolveRows(rows: readonly DraftRow[], around: Surroundings, isKnown: (targetId: string, key: string) => boolean): Map<string, Resolution> {
+  const firstRows = new Map<string, number>()
+  const resolutions = new Map<string, Resolution>()
+  for (const row of rows) {
+    const found = targetOf(row, around)
+    const targetId = 'target' in found ? found.target.id : null
+    const problems = 'problem' in found && row.parsed ? [found.problem] : []
+    if (!row.parsed || targetId === null || hasErrors(row.problems)) {
+      resolutions.set(row.id, { state: 'bad', targetId, problems })
+      continue
+    }
+    const key = measureKey(row.parsed, around)
+    const first = firstRows.get(`${targetId}|${key}`)
+    firstRows.set(`${targetId}|${key}`, first ?? row.rowNumber)
+    if (isKnown(targetId, key)) resolutions.set(row.id, { state: 'already-here', targetId, problems: [note(row, ALREADY_HERE)] })
+    else if (first !== undefined) resolutions.set(row.id, { state: 'already-here', targetId, problems: [note(row, ROW_SENTENCES.duplicateOfRow(first))] })
+    else resolutions.set(row.id, { state: 'good', targetId, problems: [] })
+  }
+  return resolutions
+}
+
+const ALREADY_HERE = {
+  reason: 'This measure is already here: same observer, target, epoch and value.',
+  remedy: 'Nothing needs doing; it will not be doubled.',
+}
+
+function note(row: DraftRow, { reason, remedy }: { reason: string; remedy: string }): CellProblem {
+  return { rowNumber: row.rowNumber, column: null, value: null, reason, remedy, severity: 'note' }
+}

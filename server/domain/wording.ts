@@ -1,0 +1,4 @@
+/** "1 measure", "9 measures". */
+export function counted(count: number, singular: string, plural = `${singular}s`): string {
+  return `${count} ${count === 1 ? singular : plural}`
+}

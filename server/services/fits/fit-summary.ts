@@ -1,0 +1,31 @@
+import type { FitResult, Refusal } from '../../../fitting/types'
+import type { FitSummary } from '#shared/schemas/fits'
+import type { FitRecord } from '../../repositories/fit-repository'
+
+export function resultOf(fit: Pick<FitRecord, 'result'>): FitResult | null {
+  return fit.result === null ? null : (JSON.parse(fit.result) as FitResult)
+}
+
+export function refusalOf(fit: Pick<FitRecord, 'refusal'>): Refusal | null {
+  return fit.refusal === null ? null : (JSON.parse(fit.refusal) as Refusal)
+}
+
+/** What a fit says in one line: the statement about its conic, why it stopped, or why there is none. */
+export function headlineOf(result: FitResult | null, refusal: Refusal | null): string | null {
+  if (result) return result.conic?.statement ?? result.stop.sentence
+  return refusal?.sentence ?? null
+}
+
+export function fitSummary(fit: FitRecord): FitSummary {
+  return {
+    id: fit.id,
+    number: fit.number,
+    state: fit.state,
+    version: fit.version,
+    createdAt: fit.created_at,
+    finishedAt: fit.finished_at,
+    requestedBy: fit.requested_by_name,
+    newMeasures: fit.new_measures,
+    headline: headlineOf(resultOf(fit), refusalOf(fit)),
+  }
+}

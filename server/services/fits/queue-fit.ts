@@ -1,0 +1,136 @@
+import type { FitSettings } from '../../../fitting/types'
+import type { FitView } from '#shared/schemas/fits'
+import { ENGINE_VERSION } from '../../../fitting'
+import type { Context, Tx } from '../../context/context'
+import { recordAudit } from '../../audit/record-audit'
+import { canonicalJson, sha256Hex } from '../../domain/canonical-json'
+import { buildFitRequest, fitRole } from '../../domain/fit-request'
+import type { StandingMeasure } from '../../domain/fit-request'
+import { SETTLED_FIT_STATES } from '../../domain/fit-state'
+import { enqueueJob } from '../../jobs/queue/enqueue-job'
+import { listSentPartsOfTarget } from '../../repositories/batch-part-repository'
+import { insertFitMeasures, insertFitParts, listAcceptedMeasureIds, listFitMeasures } from '../../repositories/fit-content-repository'
+import { insertFit, listFitsInStates, listFitsOfInput, nextFitNumber } from '../../repositories/fit-repository'
+import { parsedRowOf } from '../../repositories/measure-columns'
+import { listStandingMeasures } from '../../repositories/measure-repository'
+import type { MeasureRecord } from '../../repositories/measure-repository'
+import type { TargetRow } from '../../repositories/target-repository'
+import { announceFit } from './announce-fit'
+import { resultOf } from './fit-summary'
+import { jobKeyOf } from './job-key'
+import { supersedeWaitingFits } from './supersede-fits'
+
+export interface SetAside {
+  reason: string
+  decidedBy: string | null
+}
+
+export interface FitOrder {
+  target: TargetRow
+  cause: FitView['cause']
+  requestedBy: string | null
+  /** What is left out, by measure; the set-asides of the last accepted fit where not given. */
+  setAside?: ReadonlyMap<string, SetAside>
+  model?: FitSettings['model']
+}
+
+export interface QueuedFit {
+  fitId: string
+  /** False where a fit from the very same request stands already. */
+  isNew: boolean
+}
+
+/**
+ * Makes one fit of all standing measures of a target, in the caller's transaction; null where no measure stands.
+ *
+ * The fit takes in every part that was sent and waits, so it contains whatever an older waiting fit of the target contains.
+ * The older one is therefore superseded here and now rather than ruled upon: two waiting fits would ask the coordinator the
+ * same question twice, and a target whose first batches are too few alone could never be fitted at all. Its batches go over
+ * to the new fit, so that one ruling settles them together.
+ */
+export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<QueuedFit | null> {
+  const measures = await listStandingMeasures(tx, order.target.id)
+  if (measures.length === 0) return null
+  const base = (await listFitsInStates(tx, order.target.id, SETTLED_FIT_STATES))[0] ?? null
+  const setAside = order.setAside ?? (base ? await setAsidesOf(tx, base.id) : new Map<string, SetAside>())
+  const request = buildFitRequest(order.target, measures.map(standingMeasure), {
+    setAside: new Set(setAside.keys()),
+    model: order.model,
+    start: base ? resultOf(base) : null,
+  })
+  const requestText = canonicalJson(request)
+  const input = { targetId: order.target.id, inputHash: sha256Hex(requestText), engineVersion: ENGINE_VERSION }
+
+  const twins = await listFitsOfInput(tx, input)
+  const standing = twins.find(twin => twin.state !== 'superseded' && twin.state !== 'declined')
+  if (standing) return { fitId: standing.id, isNew: false }
+
+  const fitId = ctx.ids.newId()
+  await supersedeWaitingFits(tx, ctx, order.target.id, fitId)
+  const number = await nextFitNumber(tx, order.target.id)
+  // The same request gives the same bytes, so what was computed once is taken over instead of being computed again.
+  const computed = twins.find(twin => twin.result !== null || twin.refusal !== null)
+  await insertFit(tx, {
+    id: fitId,
+    target_id: order.target.id,
+    number,
+    state: computed ? (computed.result === null ? 'failed' : 'done') : 'queued',
+    requested_by: order.requestedBy,
+    cause: order.cause,
+    request: requestText,
+    input_hash: input.inputHash,
+    engine_version: input.engineVersion,
+    seed: request.settings?.seed ?? 1,
+    base_fit_id: base?.id ?? null,
+    result: computed?.result ?? null,
+    refusal: computed?.refusal ?? null,
+    created_at: ctx.clock.now(),
+    finished_at: computed ? ctx.clock.now() : null,
+  })
+  await linkContent(tx, { fitId, targetId: order.target.id, measures, setAside })
+  await recordAudit(tx, ctx, {
+    event: 'fit.requested',
+    subjectKind: 'fit',
+    subjectId: fitId,
+    targetId: order.target.id,
+    detail: { number, cause: order.cause, inputHash: input.inputHash, engineVersion: input.engineVersion },
+  })
+  if (!computed) await enqueueJob(tx, ctx, { name: 'run-fit', payload: { fitId }, uniqueKey: jobKeyOf(input) })
+  announceFit(ctx, { fitId, targetId: order.target.id, state: computed ? 'done' : 'queued' })
+  return { fitId, isNew: true }
+}
+
+async function setAsidesOf(tx: Tx, fitId: string): Promise<Map<string, SetAside>> {
+  const rows = await listFitMeasures(tx, fitId)
+  return new Map(rows
+    .filter(row => row.role === 'set-aside')
+    .map(row => [row.measure_id, { reason: row.reason!, decidedBy: row.decided_by }]))
+}
+
+interface FitContent {
+  fitId: string
+  targetId: string
+  measures: readonly MeasureRecord[]
+  setAside: ReadonlyMap<string, SetAside>
+}
+
+async function linkContent(tx: Tx, { fitId, targetId, measures, setAside }: FitContent): Promise<void> {
+  const accepted = await listAcceptedMeasureIds(tx, targetId)
+  await insertFitMeasures(tx, measures.map((measure) => {
+    const decision = setAside.get(measure.id)
+    return {
+      fit_id: fitId,
+      measure_id: measure.id,
+      role: fitRole(parsedRowOf(measure), decision !== undefined),
+      reason: decision?.reason ?? null,
+      decided_by: decision?.decidedBy ?? null,
+      is_new: accepted.has(measure.id) ? 0 : 1,
+    }
+  }))
+  const parts = await listSentPartsOfTarget(tx, targetId)
+  await insertFitParts(tx, fitId, parts.map(part => part.id))
+}
+
+function standingMeasure(measure: MeasureRecord): StandingMeasure {
+  return { id: measure.id, observer: measure.observer_name, row: parsedRowOf(measure) }
+}
