@@ -56,6 +56,15 @@ export function withoutLowWord(x: number): number {
 }
 
 /**
+ * A power of two, exactly.
+ * @param exponent whole number, −1074 to 1023.
+ * @returns 2^exponent.
+ */
+export function powerOfTwo(exponent: number): number {
+  return powersOfTwo[exponent - SMALLEST_EXPONENT]!
+}
+
+/**
  * x·2^exponent, rounded once.
  * @param x a finite double of magnitude 1/4 to 4.
  * @param exponent whole number, −1100 to 1025.

@@ -2,7 +2,7 @@
  * Natural logarithm and ln(1 + x): x = 2^k·(1 + f), √½ < 1 + f < √2, s = f/(2 + f), ln(1 + f) = 2s + s·R(s²).
  * Coefficients: fdlibm 5.3, e_log.c and s_log1p.c, © 1993 Sun Microsystems, freely usable with this notice preserved.
  */
-import { highWord, withHighWord } from './float-bits'
+import { highWord, powerOfTwo, withHighWord } from './float-bits'
 
 const LN2_HIGH = 6.93147180369123816490e-01
 const LN2_LOW = 1.90821492927058770002e-10
@@ -32,17 +32,16 @@ export function log(x: number): number {
   if (x === 0) return -Infinity
   if (!(x > 0)) return NaN
   if (x === Infinity) return x
-  let k = 0
-  let scaled = x
-  if (x < 2.2250738585072014e-308) {
-    k = -54
-    scaled = x * TWO_54
-  }
-  const high = highWord(scaled)
-  const significand = high & 0x000FFFFF
-  const carry = (significand + 0x95F64) & 0x100000
-  k += (high >> 20) - 1023 + (carry >> 20)
-  const f = withHighWord(scaled, significand | (carry ^ 0x3FF00000)) - 1
+  if (x < 2.2250738585072014e-308) return logNormal(x * TWO_54, -54)
+  return logNormal(x, 0)
+}
+
+/** ln x + already·ln 2 for a normal positive x; the sum with 0x95F64 carries into the exponent where the significand exceeds √2. */
+function logNormal(x: number, already: number): number {
+  const high = highWord(x)
+  const exponent = ((high + 0x95F64) >> 20) - 1023
+  const k = exponent + already
+  const f = x * powerOfTwo(-exponent) - 1
   if (f === 0) return k * LN2_HIGH + k * LN2_LOW
   const s = f / (2 + f)
   const half = 0.5 * f * f

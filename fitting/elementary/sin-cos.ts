@@ -90,13 +90,3 @@ export function cos(x: number): number {
   const value = (quadrant & 1) === 1 ? sinNearZero(reduced[0]!, reduced[1]!) : cosNearZero(reduced[0]!, reduced[1]!)
   return quadrant === 1 || quadrant === 2 ? -value : value
 }
-
-/**
- * Tangent of an angle, as the quotient of sine and cosine.
- * @param x angle, rad, any finite double.
- * @returns tan x within 2 ulp; NaN where x is NaN or infinite.
- * Source: definition.
- */
-export function tan(x: number): number {
-  return sin(x) / cos(x)
-}

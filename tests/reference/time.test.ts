@@ -30,9 +30,9 @@ describe('Besselian and Julian epochs', () => {
     { quantity: 'JD of J2050.0', expected: 2469807.5, tolerance: 1e-9, computed: () => jdFromJulianEpoch(2050) },
   ])
   checkAgainst('the test values of the IAU SOFA routines epb, epb2jd, epj and epj2jd', [
-    { quantity: 'B of JD 2445122.99998', expected: 1982.41842415927858, tolerance: 2e-12, computed: () => besselianEpochFromJd(2415019.8135 + 30103.18648) },
+    { quantity: 'B of JD 2445122.99998', expected: 1982.418424159279, tolerance: 2e-12, computed: () => besselianEpochFromJd(2415019.8135 + 30103.18648) },
     { quantity: 'MJD of B1957.3', expected: 35948.1915101513, tolerance: 1e-9, computed: () => mjdFromJd(jdFromBesselianEpoch(1957.3)) },
-    { quantity: 'J of JD 2444152.5', expected: 1979.760438056125941, tolerance: 1e-12, computed: () => julianEpochFromJd(2451545 - 7392.5) },
+    { quantity: 'J of JD 2444152.5', expected: 1979.760438056126, tolerance: 1e-12, computed: () => julianEpochFromJd(2451545 - 7392.5) },
     { quantity: 'MJD of J1996.8', expected: 50375.7, tolerance: 1e-7, computed: () => mjdFromJd(jdFromJulianEpoch(1996.8)) },
   ])
   checkAgainst('the formulas of Lieske 1979, A&A 73, 282', [
