@@ -11,6 +11,9 @@ import type { PlanePoint } from './plane-measure'
 /** Names of the regular parameters, in order. */
 export const PLANE_NAMES = ['semiLatusRectum', 'k', 'h'] as const
 
+/** 1 + e cos ν below this is the asymptote: r beyond 1e12 p. */
+const SMALLEST_DENOMINATOR = 1e-12
+
 interface PreparedPoint {
   cosine: number
   sine: number
@@ -45,7 +48,7 @@ export function planeProblem(points: readonly PlanePoint[], diameterScale: numbe
       for (let i = 0; i < prepared.length; i++) {
         const { cosine, sine, isDiameter, value, whitening, scale } = prepared[i]!
         const denominator = 1 + values[1]! * cosine + values[2]! * sine
-        if (!(denominator > 0)) return false
+        if (!(denominator > SMALLEST_DENOMINATOR)) return false
         const model = isDiameter ? (scale * denominator) / p : p / denominator
         residuals[i] = (model - value) * whitening
         if (!jacobian) continue
