@@ -34,12 +34,13 @@ describe('elementary functions at the edges', () => {
   it('sine and cosine together are the same bits as each alone', () => {
     const random = randomStream(3)
     const out = new Float64Array(2)
+    const differing: number[] = []
     for (let n = 0; n < 100_000; n++) {
       const x = (random.uniform() - 0.5) * (n % 2 ? 10 : 1e7)
       own.sinCosInto(x, out)
-      expect(out[0]).toBe(own.sin(x))
-      expect(out[1]).toBe(own.cos(x))
+      if (out[0] !== own.sin(x) || out[1] !== own.cos(x)) differing.push(x)
     }
+    expect(differing).toEqual([])
     own.sinCosInto(NaN, out)
     expect([...out]).toEqual([NaN, NaN])
     own.sinCosInto(-Infinity, out)
@@ -69,10 +70,12 @@ function isLengthWithinOneUlp(h: number, x: number, y: number): boolean {
 describe('hypot', () => {
   it('is within one unit in the last place of the true length', () => {
     const random = randomStream(11)
-    for (let n = 0; n < 200_000; n++) {
+    const wrong: [number, number][] = []
+    for (let n = 0; n < 40_000; n++) {
       const x = Math.floor((random.uniform() + 2e-9) * 2 ** 50) / 2 ** 50
       const y = Math.floor(random.uniform() * 2 ** 50) / 2 ** (50 + n % 8)
-      expect(isLengthWithinOneUlp(own.hypot(x, y), x, y), `hypot(${x}, ${y})`).toBe(true)
+      if (!isLengthWithinOneUlp(own.hypot(x, y), x, y)) wrong.push([x, y])
     }
+    expect(wrong).toEqual([])
   })
 })

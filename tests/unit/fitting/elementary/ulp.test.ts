@@ -4,6 +4,8 @@ import { randomStream } from '../../../../fitting/random'
 import { ulpsApart } from './ulps'
 
 const DRAWS = 1_000_000
+/** A million draws take a quarter of a second alone on a core, more on a shared one. */
+const PATIENCE = { timeout: 60_000 }
 
 /** Spread evenly in the logarithm of the magnitude, both signs. */
 const logSpread = (u: number, smallest: number, largest: number, sign: number) =>
@@ -63,7 +65,7 @@ const cases: [string, (x: number) => number, (x: number) => number, (u: number, 
   ['cbrt of any size', own.cbrt, Math.cbrt, anySize],
 ]
 
-describe('elementary functions', () => {
+describe('elementary functions', PATIENCE, () => {
   it.each(cases)('%s stays within one unit in the last place of the standard one', (_, mine, standard, draw) => {
     const { ulps, at } = worst(mine, standard, draw, 20261201)
     expect(ulps, `at ${at}`).toBeLessThanOrEqual(1)
