@@ -18,17 +18,18 @@ const CACHE = 'public, max-age=31536000, immutable'
 /** Answers a published file, or 304 where the reader has it; licence and citation go along as links (RFC 8288). */
 export function sendDownload(event: H3Event, file: PublishedFile): string | null {
   const etag = `"${file.sha256}"`
+  setResponseHeaders(event, { 'Cache-Control': CACHE, 'ETag': etag })
+  if (isKnown(getRequestHeader(event, 'if-none-match'), etag)) {
+    setResponseStatus(event, 304)
+    return null
+  }
   setResponseHeaders(event, {
-    'Cache-Control': CACHE,
     'Content-Type': file.mediaType,
     'Content-Disposition': `attachment; filename="${file.fileName}"`,
     'X-Content-Type-Options': 'nosniff',
-    'ETag': etag,
     'Link': `<${LICENCE}>; rel="license", <${file.citeAs}>; rel="cite-as"`,
   })
-  if (!isKnown(getRequestHeader(event, 'if-none-match'), etag)) return file.text
-  setResponseStatus(event, 304)
-  return null
+  return file.text
 }
 
 function isKnown(header: string | undefined, etag: string): boolean {

@@ -1,3 +1,4 @@
+import type { z } from 'zod'
 import { actingAs } from '../../server/context/context'
 import type { Context } from '../../server/context/context'
 import { getPerson, hasAnyPerson } from '../../server/repositories/person-repository'
@@ -49,7 +50,7 @@ export async function addPerson(house: { ctx: Context }, person: NewPerson): Pro
   return { ...added, ctx: await actingAsPerson(house.ctx, added.id) }
 }
 
-export async function addProgramme(house: { ctx: Context }, programme: Parameters<typeof createProgrammeSchema.parse>[0] & { name: string }): Promise<ProgrammeView> {
+export async function addProgramme(house: { ctx: Context }, programme: z.input<typeof createProgrammeSchema>): Promise<ProgrammeView> {
   return await createProgramme(await keeperOf(house), createProgrammeSchema.parse(programme))
 }
 

@@ -43,6 +43,12 @@ export function truePlace(pair: TruePair, epochYr: number): { thetaDeg: number, 
   return { thetaDeg: withinTurn(Math.atan2(across, along) / RADIANS_PER_DEGREE + pair.nodeDeg), rhoArcsec: radius * Math.hypot(along, across) }
 }
 
+/** Epochs as observers give them, about a step apart: at perfectly even steps short periods would fit as well as the true one. */
+export function unevenEpochs({ from, count, stepYr, seed }: { from: number, count: number, stepYr: number, seed: number }): number[] {
+  const random = randomStream(seed)
+  return Array.from({ length: count }, (_, k) => from + stepYr * (k + 0.6 * random.uniform()))
+}
+
 /** Measures at these epochs with normal errors; the same seed gives the same measures. */
 export function simulatePair(pair: TruePair, epochsYr: readonly number[], noise: Noise): SimulatedMeasure[] {
   const random = randomStream(noise.seed)
