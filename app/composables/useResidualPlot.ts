@@ -1,6 +1,6 @@
 import type { PlotLayout, PlotTrace } from 'plotly.js-cartesian-dist-min'
 import type { MarkShape, ObserverMark } from '#shared/drawing/observer-marks'
-import { axisRange, axisTicksFor } from '#shared/drawing/residual-sheet'
+import { axisRange, axisTicksFor, residualTicks } from '#shared/drawing/residual-sheet'
 import { halfHeight } from '#shared/drawing/residual-series'
 import type { ResidualChart, ResidualPoint, ResidualSeries } from '#shared/drawing/residual-series'
 import type { PlotColours } from './usePlotColours'
@@ -91,7 +91,7 @@ function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotCol
   const quiet = { gridcolor: colours.grid, linecolor: colours.rule, tickcolor: colours.rule, zeroline: false, fixedrange: false }
   const yAxes = Object.fromEntries(chart.series.map((series, row) => [row === 0 ? 'yaxis' : `yaxis${row + 1}`, {
     ...quiet, domain: [tops[row]! - height, tops[row]!], range: [-halfHeight(series), halfHeight(series)],
-    nticks: 4, zeroline: true, zerolinecolor: colours.orbit, zerolinewidth: 1.4, tickformat: '+', ticks: '',
+    tickvals: residualTicks(series).values, zeroline: true, zerolinecolor: colours.orbit, zerolinewidth: 1.4, tickformat: '+', ticks: '',
   }]))
   return {
     paper_bgcolor: 'rgba(0,0,0,0)', plot_bgcolor: 'rgba(0,0,0,0)', showlegend: false, autosize: true, uirevision: 'kept',

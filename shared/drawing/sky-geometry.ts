@@ -1,124 +1,83 @@
 import type { Element, FitResult, Prediction, Residual } from '../../fitting/types'
-import type { PlanePoint } from './drawing-plate'
+import type { Point } from './conic-outline'
 
 const RADIANS_PER_DEGREE = Math.PI / 180
+/** Below this |cos i| the sky is seen edge-on and a measure cannot be carried back onto the plane of the orbit. */
+const LEAST_COS_INCLINATION = 0.05
 
-/**
- * The sky as it is drawn: north up and east to the left, as one sees it. x is therefore minus east.
- * All lengths are arcseconds.
- */
-export interface SkyOrbit {
-  semiMajorAxisArcsec: number
-  eccentricity: number
-  inclinationRad: number
-  nodeRad: number
-  argumentOfPeriastronRad: number
-}
-
-/** The ellipse's elements as the drawing needs them; null where the fit is no ellipse on the sky (a line, a still pair). */
-export function skyOrbit(elements: Record<string, Element>): SkyOrbit | null {
-  const { semiMajorAxis, eccentricity } = elements
-  if (!semiMajorAxis || !eccentricity || !(eccentricity.value < 1)) return null
-  const radians = (name: string) => (elements[name]?.value ?? 0) * RADIANS_PER_DEGREE
-  return {
-    semiMajorAxisArcsec: semiMajorAxis.value,
-    eccentricity: eccentricity.value,
-    inclinationRad: radians('inclination'),
-    nodeRad: radians('node'),
-    argumentOfPeriastronRad: radians('argumentOfPeriastron'),
-  }
-}
-
-/** Where the companion stands at a true anomaly, on the sky as drawn. */
-export function skyPointAtAnomaly(orbit: SkyOrbit, trueAnomalyRad: number): PlanePoint {
-  const { semiMajorAxisArcsec: a, eccentricity: e } = orbit
-  const r = (a * (1 - e * e)) / (1 + e * Math.cos(trueAnomalyRad))
-  return skyPointInPlane(orbit, r, trueAnomalyRad)
-}
-
-function skyPointInPlane(orbit: SkyOrbit, r: number, trueAnomalyRad: number): PlanePoint {
-  const u = trueAnomalyRad + orbit.argumentOfPeriastronRad
-  const alongNode = r * Math.cos(u)
-  const acrossNode = r * Math.sin(u) * Math.cos(orbit.inclinationRad)
-  const [sinNode, cosNode] = [Math.sin(orbit.nodeRad), Math.cos(orbit.nodeRad)]
-  const north = alongNode * cosNode - acrossNode * sinNode
-  const east = alongNode * sinNode + acrossNode * cosNode
-  return skyPoint(east, north)
-}
-
-/** East and north, arcsec, as a point of the drawing (east is drawn to the left). */
-export function skyPoint(eastArcsec: number, northArcsec: number): PlanePoint {
-  return { x: -eastArcsec, y: northArcsec }
-}
-
-/** A position angle (from north through east) and separation as a point of the drawing. */
-export function skyPointPolar(thetaDeg: number, rhoArcsec: number): PlanePoint {
-  const theta = thetaDeg * RADIANS_PER_DEGREE
-  return skyPoint(rhoArcsec * Math.sin(theta), rhoArcsec * Math.cos(theta))
-}
-
-/** The whole ellipse in even steps of the eccentric anomaly, so that its sharp end is drawn as finely as the rest. */
-export function skyEllipse(orbit: SkyOrbit, steps = 180): PlanePoint[] {
-  const { semiMajorAxisArcsec: a, eccentricity: e } = orbit
-  return Array.from({ length: steps }, (_, index) => {
-    const E = (2 * Math.PI * index) / steps
-    const [x, y] = [a * (Math.cos(E) - e), a * Math.sqrt(1 - e * e) * Math.sin(E)]
-    return skyPointInPlane(orbit, Math.hypot(x, y), Math.atan2(y, x))
-  })
-}
-
-/** From periastron to apastron, through the primary. */
-export function skyApsides(orbit: SkyOrbit): { periastron: PlanePoint; apastron: PlanePoint } {
-  return { periastron: skyPointAtAnomaly(orbit, 0), apastron: skyPointAtAnomaly(orbit, Math.PI) }
-}
-
-/** The two points where the orbit crosses the plane of the sky; the first lies at the position angle Ω. */
-export function skyNodes(orbit: SkyOrbit): [PlanePoint, PlanePoint] {
-  const ω = orbit.argumentOfPeriastronRad
-  return [skyPointAtAnomaly(orbit, -ω), skyPointAtAnomaly(orbit, Math.PI - ω)]
-}
-
-/** A measure on the sky: where it was seen, and where the fit puts it. */
+/** A measure on the sky: where it was seen, and where the fit puts it; x east, y north, arcsec. */
 export interface SkyMeasure {
   id: string
-  observed: PlanePoint
-  computed: PlanePoint
+  observed: Point
+  computed: Point
   status: Residual['status']
 }
 
 /**
- * Observed and computed place of each residual. What was not measured (θ alone, ρ alone) is taken from the computed place,
- * so that the tick shows just the coordinate that was measured. Measures without any O−C (not resolved) have no place.
+ * Places of the residuals. What was not measured (θ alone, ρ alone) is taken from the computed place, so that the tick from one
+ * to the other shows just the coordinate that was measured. A measure without any O−C (not resolved) has no place.
+ * @param result a finished fit of kind `relative`.
+ * @returns one entry a measure that has a place, in the order of the residuals.
  */
 export function skyMeasures(result: FitResult): SkyMeasure[] {
-  return result.residuals.flatMap(residual => {
-    const computed = pointOf(residual.computed)
-    const observed = pointOf(withDifference(residual))
-    const isSeen = Object.values(residual.observedMinusComputed).some(value => value !== null)
-    return computed && observed && isSeen ? [{ id: residual.id, observed, computed, status: residual.status }] : []
+  return result.residuals.flatMap((residual) => {
+    const computed = skyPlace(residual.computed)
+    const observed = observedPlace(residual)
+    return computed && observed && isMeasured(residual) ? [{ id: residual.id, observed, computed, status: residual.status }] : []
   })
 }
 
-function withDifference(residual: Residual): Record<string, number> {
-  return Object.fromEntries(
-    Object.entries(residual.computed).map(([name, value]) => [name, value + (residual.observedMinusComputed[name] ?? 0)]),
-  )
+function observedPlace({ computed, observedMinusComputed }: Residual): Point | null {
+  const measured = Object.entries(observedMinusComputed).filter((entry): entry is [string, number] => entry[1] !== null)
+  const differences = Object.fromEntries(measured)
+  const isRectangular = differences.eastArcsec !== undefined || differences.northArcsec !== undefined
+  const names = isRectangular ? ['eastArcsec', 'northArcsec'] : ['thetaDeg', 'rhoArcsec']
+  return skyPlace(Object.fromEntries(names.flatMap(name => computed[name] === undefined ? [] : [[name, computed[name] + (differences[name] ?? 0)]])))
 }
 
-function pointOf(values: Record<string, number>): PlanePoint | null {
+function isMeasured({ observedMinusComputed }: Residual): boolean {
+  return Object.values(observedMinusComputed).some(value => value !== null)
+}
+
+/**
+ * A place on the sky from named values: θ and ρ, or east and north (θ and ρ are taken where both pairs are there).
+ * @param values by name: thetaDeg, rhoArcsec, eastArcsec, northArcsec.
+ * @returns x east, y north, arcsec; null where neither pair is there.
+ */
+export function skyPlace(values: Record<string, number>): Point | null {
   const { thetaDeg, rhoArcsec, eastArcsec, northArcsec } = values
-  if (eastArcsec !== undefined && northArcsec !== undefined && thetaDeg === undefined) return skyPoint(eastArcsec, northArcsec)
-  if (thetaDeg !== undefined && rhoArcsec !== undefined) return skyPointPolar(thetaDeg, rhoArcsec)
-  return null
+  if (thetaDeg !== undefined && rhoArcsec !== undefined) {
+    const thetaRad = thetaDeg * RADIANS_PER_DEGREE
+    return { x: rhoArcsec * Math.sin(thetaRad), y: rhoArcsec * Math.cos(thetaRad) }
+  }
+  return eastArcsec !== undefined && northArcsec !== undefined ? { x: eastArcsec, y: northArcsec } : null
 }
 
-/** A predicted place; null where the prediction is of another kind. */
-export function skyPrediction(prediction: Prediction): PlanePoint | null {
-  return pointOf(prediction.values)
+/**
+ * The two points where the orbit crosses the plane of the sky, on either side of the primary.
+ * @param elements of a fit of kind `relative`, model `kepler`.
+ * @returns the one at position angle Ω first; null where an element is missing.
+ */
+export function skyNodes(elements: Record<string, Element>): [Point, Point] | null {
+  const { semiMajorAxis, eccentricity, node, argumentOfPeriastron } = elements
+  if (!semiMajorAxis || !eccentricity || !node || !argumentOfPeriastron) return null
+  const p = semiMajorAxis.value * (1 - eccentricity.value ** 2)
+  const eCosω = eccentricity.value * Math.cos(argumentOfPeriastron.value * RADIANS_PER_DEGREE)
+  const [toEast, toNorth] = [Math.sin(node.value * RADIANS_PER_DEGREE), Math.cos(node.value * RADIANS_PER_DEGREE)]
+  const [near, far] = [p / (1 + eCosω), p / (1 - eCosω)]
+  return [{ x: near * toEast, y: near * toNorth }, { x: -far * toEast, y: -far * toNorth }]
 }
 
-/** The inclination below which measures cannot be carried back onto the plane of the orbit: |cos i| < 0.05. */
+/** Predicted places with their year; those of another kind are left out. */
+export function skyPredictions(predictions: readonly Prediction[]): { yearYr: number; place: Point }[] {
+  return predictions.flatMap(({ at, values }) => {
+    const place = skyPlace(values)
+    return place ? [{ yearYr: at, place }] : []
+  })
+}
+
+/** True where |cos i| < 0.05: the measures are not carried back onto the plane of the orbit. */
 export function isSeenEdgeOn(elements: Record<string, Element>): boolean {
   const inclination = elements.inclination
-  return inclination !== undefined && Math.abs(Math.cos(inclination.value * RADIANS_PER_DEGREE)) < 0.05
+  return inclination !== undefined && Math.abs(Math.cos(inclination.value * RADIANS_PER_DEGREE)) < LEAST_COS_INCLINATION
 }

@@ -1,0 +1,60 @@
+import type { FitResult, Prediction } from '../../fitting/types'
+import { roundStep } from './axis-ticks'
+import type { PredictedSigma, ResidualSubject } from './residual-series'
+
+const RADIANS_PER_DEGREE = Math.PI / 180
+const SAMPLES = 80
+/** How far past now the band and the marked years reach, as a part of the span of the measures. */
+const AHEAD = 0.25
+const MARKED_YEARS = 5
+/** Marked years stand about this part of a period apart. */
+const MARK_STEP_TURNS = 1 / 15
+
+/**
+ * Where the prediction's σ is asked for along the axis of the residual plots.
+ * @param result a finished fit.
+ * @param subjects its measures.
+ * @param nowYr Julian year now.
+ * @returns Julian years from the first measure to past now; for `plane` directions, degrees, once around.
+ */
+export function sampledEpochsYr(result: FitResult, subjects: readonly ResidualSubject[], nowYr: number): number[] {
+  if (result.kind === 'plane') return Array.from({ length: SAMPLES + 1 }, (_, index) => (360 * index) / SAMPLES)
+  const epochs = subjects.flatMap(subject => (subject.epochYr === null ? [] : [subject.epochYr]))
+  if (epochs.length === 0) return []
+  const first = epochs.reduce((a, b) => Math.min(a, b))
+  const last = Math.max(nowYr, epochs.reduce((a, b) => Math.max(a, b)))
+  const end = last + Math.max(1, (last - first) * AHEAD)
+  return Array.from({ length: SAMPLES + 1 }, (_, index) => first + ((end - first) * index) / SAMPLES)
+}
+
+/**
+ * σ of predictions by the names the residuals use: across is ρ σ_θ, along is σ_ρ.
+ * @param predictions from the engine.
+ * @returns one entry a prediction that has σ.
+ */
+export function predictedSigmas(predictions: readonly Prediction[]): PredictedSigma[] {
+  return predictions.map(({ at, values, sigmas }) => ({ at, sigmas: byResidualName(values, sigmas) }))
+}
+
+function byResidualName(values: Record<string, number>, sigmas: Prediction['sigmas']): Record<string, number> {
+  const { thetaDeg, rhoArcsec, ...others } = sigmas
+  const named: Record<string, number | null | undefined> = { ...others }
+  if (typeof thetaDeg === 'number') named.acrossArcsec = (values.rhoArcsec ?? 0) * thetaDeg * RADIANS_PER_DEGREE
+  if (typeof rhoArcsec === 'number') named.alongArcsec = rhoArcsec
+  return Object.fromEntries(Object.entries(named).filter((entry): entry is [string, number] => typeof entry[1] === 'number'))
+}
+
+/**
+ * The years that the sky drawing marks: the coming one, then round ones a fifteenth of a period apart.
+ * @param result a finished fit of kind `relative`.
+ * @param nowYr Julian year now.
+ * @returns Julian years, ascending.
+ */
+export function yearsToMark(result: FitResult, nowYr: number): number[] {
+  const periodYr = result.elements.period?.value ?? 75
+  const step = roundStep(Math.min(periodYr, 1500) * MARK_STEP_TURNS)
+  const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9))
+  const soonest = step >= 1 ? Math.ceil(nowYr) : (Math.floor(nowYr / step) + 1) * step
+  const firstRound = (Math.floor(soonest / step) + 1) * step
+  return [soonest, ...Array.from({ length: MARKED_YEARS - 1 }, (_, index) => firstRound + index * step)].map(year => Number(year.toFixed(decimals)))
+}
