@@ -58,7 +58,7 @@ export function readSettings(env: Environment = process.env): Settings {
   const host = env.SEMILATUS_HOST || '127.0.0.1'
   const port = readPort(env.SEMILATUS_PORT, 3000)
   if (port === null) refuse('SEMILATUS_PORT', `is "${env.SEMILATUS_PORT}"`)
-  const baseUrl = (env.SEMILATUS_BASE_URL || `http://${host === '0.0.0.0' || host === '::' ? 'localhost' : host}:${port}`).replace(/\/+$/, '')
+  const baseUrl = (env.SEMILATUS_BASE_URL || `http://${nameOfHost(host)}:${port}`).replace(/\/+$/, '')
   if (!isWebAddress(baseUrl)) refuse('SEMILATUS_BASE_URL', `is "${baseUrl}"`)
   const logLevel = LOG_LEVELS.find(level => level === (env.SEMILATUS_LOG_LEVEL || 'info'))
   if (!logLevel) refuse('SEMILATUS_LOG_LEVEL', `is "${env.SEMILATUS_LOG_LEVEL}"`)
@@ -94,6 +94,12 @@ function readPort(text: string | undefined, fallback: number): number | null {
   if (!text) return fallback
   const port = /^\d{1,5}$/.test(text) ? Number(text) : 0
   return port >= 1 && port <= 65535 ? port : null
+}
+
+/** A host as it stands in an address: any interface is reached as localhost, IPv6 stands in brackets. */
+function nameOfHost(host: string): string {
+  if (host === '0.0.0.0' || host === '::') return 'localhost'
+  return host.includes(':') ? `[${host}]` : host
 }
 
 function isWebAddress(text: string): boolean {

@@ -22,6 +22,8 @@ export interface RouteInput<Params, Query, Body> {
   query: Query
   body: Body
   event: H3Event
+  /** Gives a success another status than the route's own. */
+  setStatus(status: number): void
 }
 
 export interface RouteDefinition<Params, Query, Body> {
@@ -30,7 +32,7 @@ export interface RouteDefinition<Params, Query, Body> {
   query?: Schema<Query>
   /** Given for JSON bodies; a route that streams its body leaves it out and reads the event. */
   body?: Schema<Body>
-  /** Status of success, 200 by default (204 where the handler answers nothing); a handler may still set another one. */
+  /** Status of success, 200 by default (204 where the handler answers nothing). */
   status?: number
   handler(input: RouteInput<Params, Query, Body>): unknown
 }
@@ -55,6 +57,7 @@ export function defineRoute<Params = undefined, Query = undefined, Body = undefi
         query: readQuery(event, route.query),
         body: await readBody(event, route.body),
         event,
+        setStatus: (status: number) => setResponseStatus(event, status),
       }
       setResponseStatus(event, route.status ?? 200)
       const answer = await route.handler(input)

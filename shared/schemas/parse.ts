@@ -4,6 +4,9 @@ import type { ProblemField } from '../errors/problem-codes'
 /** A schema whose answers are of type Value. */
 export type Schema<Value> = z.ZodType<Value>
 
+/** What a schema answers: `ValueOf<typeof signInSchema>`. */
+export type ValueOf<S extends z.ZodType> = z.output<S>
+
 export type Parsed<Value> = { ok: true, value: Value } | { ok: false, fields: ProblemField[] }
 
 /** Reads `input` by `schema`; what cannot be used comes back as paths with reasons, in the schema's order. */

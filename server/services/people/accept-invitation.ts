@@ -1,6 +1,6 @@
-import type { z } from 'zod'
 import { nameKey } from '#shared/intake/name-key'
 import type { acceptInvitationSchema, Me } from '#shared/schemas/people'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { actingAs, withTransaction } from '../../context/context'
 import type { Context, Tx } from '../../context/context'
@@ -13,7 +13,7 @@ import { meOf } from './me-of'
 import { usableInvitation } from './read-invitation'
 import { startSession } from './start-session'
 
-type NewAccount = z.output<typeof acceptInvitationSchema>
+type NewAccount = ValueOf<typeof acceptInvitationSchema>
 
 /**
  * Makes the account that a link invites to, with its roles and its observer, and signs it in. Open to whoever has the link;

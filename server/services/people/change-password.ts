@@ -1,5 +1,5 @@
-import type { z } from 'zod'
 import type { changePasswordSchema } from '#shared/schemas/people'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -14,7 +14,7 @@ const limiter = createAttemptLimiter()
  * Gives the actor a new password and ends their other sessions. Open to whoever is signed in and knows the present one;
  * records password.changed; throws input-invalid for a wrong present password, too-many-attempts, changed-meanwhile.
  */
-export async function changePassword(ctx: Context, { currentPassword, newPassword }: z.output<typeof changePasswordSchema>, sessionId: string): Promise<void> {
+export async function changePassword(ctx: Context, { currentPassword, newPassword }: ValueOf<typeof changePasswordSchema>, sessionId: string): Promise<void> {
   if (!ctx.actor) throw signInRequired()
   const { personId } = ctx.actor
   limiter.begin(personId, ctx.clock)

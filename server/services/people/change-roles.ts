@@ -1,6 +1,6 @@
-import type { z } from 'zod'
 import { mayAdminister } from '#shared/policies/administering'
 import type { changeRolesSchema, PersonView } from '#shared/schemas/people'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -13,7 +13,7 @@ import { personView } from './list-people'
  * Sets all roles of a person. For administrators; records roles.changed; throws not-found, input-invalid for an unknown
  * programme, wrong-state where nobody would be left to administer.
  */
-export async function changeRoles(ctx: Context, personId: string, roles: z.output<typeof changeRolesSchema>): Promise<PersonView> {
+export async function changeRoles(ctx: Context, personId: string, roles: ValueOf<typeof changeRolesSchema>): Promise<PersonView> {
   if (!mayAdminister(ctx.actor)) throw notFound()
   return await withTransaction(ctx, async (tx) => {
     await getPerson(tx, personId)

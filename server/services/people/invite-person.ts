@@ -1,6 +1,6 @@
-import type { z } from 'zod'
 import { mayAdminister } from '#shared/policies/administering'
 import type { inviteSchema, NewInvitation } from '#shared/schemas/people'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -13,7 +13,7 @@ import { writeInvitation } from './write-invitation'
  * Makes a link that creates one account with these roles; the link is answered this once and kept as a hash. For
  * administrators; records person.invited; throws email-taken, input-invalid for an unknown programme.
  */
-export async function invitePerson(ctx: Context, invitation: z.output<typeof inviteSchema>): Promise<NewInvitation> {
+export async function invitePerson(ctx: Context, invitation: ValueOf<typeof inviteSchema>): Promise<NewInvitation> {
   if (!mayAdminister(ctx.actor)) throw notFound()
   return await withTransaction(ctx, async (tx) => {
     if (invitation.email && await findPersonByEmail(tx, invitation.email)) {

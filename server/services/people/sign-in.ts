@@ -1,5 +1,5 @@
-import type { z } from 'zod'
 import type { Me, signInSchema } from '#shared/schemas/people'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { actingAs, withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -18,7 +18,7 @@ const addressLimiter = createAttemptLimiter({ maxFailures: 100 })
  * Starts a session for the one who knows the password. Anybody may call it, some times; records person.signed-in; throws
  * sign-in-failed, alike for an unknown address and a wrong password, or too-many-attempts.
  */
-export async function signIn(ctx: Context, { email, password }: z.output<typeof signInSchema>, clientAddress: string): Promise<{ me: Me, sessionId: string }> {
+export async function signIn(ctx: Context, { email, password }: ValueOf<typeof signInSchema>, clientAddress: string): Promise<{ me: Me, sessionId: string }> {
   const key = `${clientAddress} ${email}`
   addressLimiter.begin(clientAddress, ctx.clock)
   limiter.begin(key, ctx.clock)

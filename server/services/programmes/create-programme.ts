@@ -1,6 +1,6 @@
-import type { z } from 'zod'
 import { mayAdminister } from '#shared/policies/administering'
 import type { createProgrammeSchema, ProgrammeView } from '#shared/schemas/targets'
+import type { ValueOf } from '#shared/schemas/parse'
 import { recordAudit } from '../../audit/record-audit'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -9,7 +9,7 @@ import { findProgrammeByName, getProgramme, insertProgramme } from '../../reposi
 import { programmeView } from './list-programmes'
 
 /** Makes a programme without coordinators; they are named by changeRoles. For administrators; records programme.created; throws name-taken. */
-export async function createProgramme(ctx: Context, programme: z.output<typeof createProgrammeSchema>): Promise<ProgrammeView> {
+export async function createProgramme(ctx: Context, programme: ValueOf<typeof createProgrammeSchema>): Promise<ProgrammeView> {
   if (!mayAdminister(ctx.actor)) throw notFound()
   return await withTransaction(ctx, async (tx) => {
     if (await findProgrammeByName(tx, programme.name)) {
