@@ -1,4 +1,4 @@
-import type { FitRequest, FitResult, FitSettings, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
+import type { FitRequest, FitSettings, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
 import type { ParsedRow } from '../../shared/intake/parsed-row'
 import { toFitMeasure } from '../../shared/intake/to-fit-measure'
 
@@ -20,8 +20,6 @@ export interface FittedTarget {
 export interface RequestOptions {
   setAside: ReadonlySet<string>
   model?: FitSettings['model'] | undefined
-  /** The accepted result to refit from; without one the engine searches blind. */
-  start: FitResult | null
 }
 
 /** The part a measure plays: a limit on the separation is kept and shown, never fitted. */
@@ -30,17 +28,18 @@ export function fitRole(row: ParsedRow, isSetAside: boolean): 'used' | 'set-asid
   return row.kind === 'relative' && row.rhoLimitArcsec !== null ? 'not-fitted' : 'used'
 }
 
-/** The whole of what the engine is asked, as it is kept with the fit and hashed. */
+/**
+ * The whole of what the engine is asked, as it is kept with the fit and hashed. No start from the accepted fit goes along: from a
+ * start the engine looks nearby only, while the search, a matter of milliseconds, finds that orbit again and any that is now better.
+ */
 export function buildFitRequest(target: FittedTarget, measures: readonly StandingMeasure[], options: RequestOptions): FitRequest {
   const settings = settingsOf(target, options)
-  const start = startOf(options)
   const asked = measures.map(({ id, observer, row }) => {
     const measure = toFitMeasure(row, id, observer)
     return options.setAside.has(id) ? { ...measure, setAside: true } : measure
   })
-  const rest = { settings, ...(start ? { start } : {}) }
-  if (target.kind === 'plane') return { kind: 'plane', measures: asked as PlaneMeasure[], ...rest }
-  if (target.kind === 'relative') return { kind: 'relative', measures: asked as RelativeMeasure[], ...rest }
+  if (target.kind === 'plane') return { kind: 'plane', measures: asked as PlaneMeasure[], settings }
+  if (target.kind === 'relative') return { kind: 'relative', measures: asked as RelativeMeasure[], settings }
   throw new RangeError('a target of the kind equatorial cannot have measures yet')
 }
 
@@ -51,10 +50,4 @@ function settingsOf(target: FittedTarget, { model }: RequestOptions): FitSetting
     ...(target.kind === 'plane' && target.radius_unit !== null ? { radiusUnit: target.radius_unit } : {}),
     ...(target.kind === 'plane' && target.diameter_scale_arcmin !== null ? { diameterScaleArcmin: target.diameter_scale_arcmin } : {}),
   }
-}
-
-/** An earlier state is a start only for the same model. */
-function startOf({ model = 'kepler', start }: RequestOptions): FitRequest['start'] | null {
-  if (!start || start.model !== model) return null
-  return { state: start.state }
 }

@@ -16,7 +16,6 @@ import { listStandingMeasures } from '../../repositories/measure-repository'
 import type { MeasureRecord } from '../../repositories/measure-repository'
 import type { TargetRow } from '../../repositories/target-repository'
 import { announceFit } from './announce-fit'
-import { resultOf } from './fit-summary'
 import { jobKeyOf } from './job-key'
 import { supersedeWaitingFits } from './supersede-fits'
 
@@ -56,7 +55,6 @@ export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<Q
   const request = buildFitRequest(order.target, measures.map(standingMeasure), {
     setAside: new Set(setAside.keys()),
     model: order.model,
-    start: base ? resultOf(base) : null,
   })
   const requestText = canonicalJson(request)
   const input = { targetId: order.target.id, inputHash: sha256Hex(requestText), engineVersion: ENGINE_VERSION }

@@ -1,6 +1,6 @@
 import { mayRequestFit } from '#shared/policies/coordinating'
 import type { FitSummary, requestFitSchema } from '#shared/schemas/fits'
-import type { z } from 'zod'
+import type { ValueOf } from '#shared/schemas/parse'
 import { withTransaction } from '../../context/context'
 import type { Context, Tx } from '../../context/context'
 import { recordAudit } from '../../audit/record-audit'
@@ -15,7 +15,7 @@ import { fitSummary } from './fit-summary'
 import { queueFit } from './queue-fit'
 import type { SetAside } from './queue-fit'
 
-type FitWish = z.infer<typeof requestFitSchema>
+type FitWish = ValueOf<typeof requestFitSchema>
 
 /**
  * Queues a fit of all standing measures of a target with the set-asides given. Open to coordinators of its programme; records

@@ -1,6 +1,6 @@
-import type { z } from 'zod'
 import { nameKey } from '#shared/intake/name-key'
 import { mayCreateTarget } from '#shared/policies/coordinating'
+import type { ValueOf } from '#shared/schemas/parse'
 import type { createTargetSchema, TargetView } from '#shared/schemas/targets'
 import { withTransaction } from '../../context/context'
 import type { Context, Tx } from '../../context/context'
@@ -10,7 +10,7 @@ import { findProgramme } from '../../repositories/programme-repository'
 import { insertTarget, insertTargetName, mapTargetsByNameKey } from '../../repositories/target-repository'
 import { viewTarget } from './read-target'
 
-type NewTarget = z.output<typeof createTargetSchema>
+type NewTarget = ValueOf<typeof createTargetSchema>
 
 /**
  * Makes a target with its names. Open to coordinators of the programme; records 'target.created'; throws name-taken where any of

@@ -1,4 +1,3 @@
-import { setResponseStatus } from 'h3'
 import { requestFitSchema } from '#shared/schemas/fits'
 import { idParamsSchema } from '#shared/schemas/ids'
 import { defineRoute } from '../../../../http/define-route'
@@ -8,9 +7,10 @@ export default defineRoute({
   access: 'coordinator',
   params: idParamsSchema,
   body: requestFitSchema,
-  async handler({ ctx, params, body, event }) {
+  status: 201,
+  async handler({ ctx, params, body, setStatus }) {
     const { fit, isNew } = await requestFit(ctx, params.id, body)
-    setResponseStatus(event, isNew ? 201 : 200)
+    if (!isNew) setStatus(200)
     return fit
   },
 })
