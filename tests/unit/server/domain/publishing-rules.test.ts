@@ -1,0 +1,37 @@
+import { describe, expect, it } from 'vitest'
+import { publishingCase, unmetRules } from '../../../../server/domain/publishing-rules'
+import { pairResult, planeResult } from '../../../builders/fit-result'
+
+const RULES = { leastMeasures: 8, leastObservers: 2, leastArcTurns: 0.5, needsSecondConsent: true }
+const MET = { measuresUsed: 8, observersUsed: 2, arcTurns: 0.5, consents: 1 }
+
+describe("the programme's rules for publishing", () => {
+  it('are met at their very limits', () => {
+    expect(unmetRules(RULES, MET)).toEqual([])
+  })
+
+  it.each([
+    ['measures', { measuresUsed: 7 }, /at least 8 measures; 7 are used/],
+    ['observers', { observersUsed: 1 }, /at least 2 observers; the measures used are by 1/],
+    ['the arc', { arcTurns: 0.49 }, /0\.5 of a turn; these cover 0\.49/],
+    ['an arc nobody knows', { arcTurns: null }, /how much these cover is not known/],
+    ['consent', { consents: 0 }, /consent of a second coordinator/],
+  ])('name what is missing: %s', (_what, lack, sentence) => {
+    const unmet = unmetRules(RULES, { ...MET, ...lack })
+    expect(unmet).toHaveLength(1)
+    expect(unmet[0]).toMatch(sentence)
+  })
+
+  it('do not ask for an arc where the programme does not', () => {
+    expect(unmetRules({ ...RULES, leastArcTurns: 0 }, { ...MET, arcTurns: null })).toEqual([])
+  })
+
+  it('count what is used, and take the directions covered as the arc where there are no times', () => {
+    const pair = pairResult()
+    pair.statistics = { ...pair.statistics, used: 19, arc: { ...pair.statistics.arc, turns: 0.8 }, byObserver: [{ observer: 'T. Orrowin', measures: 19, rms: {}, bias: {} }, { observer: 'R. Quellmann', measures: 0, rms: {}, bias: {} }] }
+    expect(publishingCase(pair, 0)).toEqual({ measuresUsed: 19, observersUsed: 1, arcTurns: 0.8, consents: 0 })
+    const plane = planeResult()
+    plane.statistics = { ...plane.statistics, arc: { ...plane.statistics.arc, trueAnomalyCoveredDeg: 270 } }
+    expect(publishingCase(plane, 0).arcTurns).toBe(0.75)
+  })
+})
