@@ -1,4 +1,5 @@
 import { defineStore } from 'pinia'
+import { ref } from 'vue'
 import type { StreamEvent } from '#shared/schemas/events'
 
 export interface Listener {
