@@ -22,6 +22,8 @@ export interface TargetFilter {
   kind?: Kind
   /** Part of a name, already in the form names are compared in. */
   nameKeyPart?: string
+  /** Only those that this person follows. */
+  followedBy?: string
   after?: { name: string; id: string }
   limit: number
 }
@@ -105,6 +107,7 @@ export async function listTargetOverviews(reads: Reads, filter: TargetFilter): P
   if (filter.nameKeyPart) {
     query = query.where(sql<boolean>`EXISTS (SELECT 1 FROM target_name n WHERE n.target_id = target.id AND instr(n.name_key, ${filter.nameKeyPart}) > 0)`)
   }
+  if (filter.followedBy) query = query.where(sql<boolean>`EXISTS (SELECT 1 FROM follow f WHERE f.target_id = target.id AND f.person_id = ${filter.followedBy})`)
   if (filter.after) query = query.where(sql<boolean>`(target.name, target.id) > (${filter.after.name}, ${filter.after.id})`)
   return query.orderBy('target.name').orderBy('target.id').limit(filter.limit).execute()
 }

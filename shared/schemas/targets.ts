@@ -32,6 +32,8 @@ export const listTargetsQuerySchema = pageQuerySchema.extend({
   kind: kindSchema.optional(),
   /** Part of any of a target's names. */
   q: z.string().trim().max(120).optional(),
+  /** followed=1: only those that the person asking follows. */
+  followed: z.literal('1').optional(),
 })
 /** The fit to show; the latest where not given. */
 export const readTargetQuerySchema = z.object({ fit: idSchema.optional() })

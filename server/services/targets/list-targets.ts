@@ -17,16 +17,19 @@ export interface TargetListing extends PageQuery {
   kind?: Kind | undefined
   /** Part of any of a target's names. */
   q?: string | undefined
+  /** '1': only those that the person asking follows. */
+  followed?: '1' | undefined
 }
 
 /** Targets by name, with what is known of their measures, their latest fit and the edition in force. Open to signed-in people. */
-export async function listTargets(ctx: Context, { programmeId, kind, q, cursor, limit = DEFAULT_LIMIT }: TargetListing): Promise<Page<TargetSummary>> {
-  if (!mayReadSentWork(ctx.actor)) throw signInRequired()
+export async function listTargets(ctx: Context, { programmeId, kind, q, followed, cursor, limit = DEFAULT_LIMIT }: TargetListing): Promise<Page<TargetSummary>> {
+  if (!ctx.actor || !mayReadSentWork(ctx.actor)) throw signInRequired()
   const after = cursor === undefined ? null : decodeCursor(cursor, ['string', 'string'])
   const targets = await listTargetOverviews(ctx.reads, {
     ...(programmeId ? { programmeId } : {}),
     ...(kind ? { kind } : {}),
     ...(q ? { nameKeyPart: nameKey(q) } : {}),
+    ...(followed ? { followedBy: ctx.actor.personId } : {}),
     ...(after ? { after: { name: after[0], id: after[1] } } : {}),
     limit: limit + 1,
   })
