@@ -1,3 +1,5 @@
+import { mayAdminister } from '#shared/policies/administering'
+import { hasDesk } from '#shared/policies/coordinating'
 import { useSessionStore } from '~/stores/session'
 
 declare module '#app' {
@@ -11,8 +13,8 @@ declare module '#app' {
 export default defineNuxtRouteMiddleware((to) => {
   const needs = to.meta.needs
   if (!needs) return
-  const { me, isCoordinator } = useSessionStore()
+  const { me } = useSessionStore()
   if (!me) return navigateTo({ path: '/sign-in', query: { next: to.fullPath } })
-  const reaches = { 'signed-in': true, 'coordinator': isCoordinator, 'administrator': me.isAdministrator }
+  const reaches = { 'signed-in': true, 'coordinator': hasDesk(me), 'administrator': mayAdminister(me) }
   if (!reaches[needs]) return abortNavigation(createError({ statusCode: 404, statusMessage: 'Not found, or not open to you', fatal: true }))
 })

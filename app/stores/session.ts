@@ -1,4 +1,7 @@
 import { defineStore } from 'pinia'
+import { computed, ref } from 'vue'
+import { hasDesk } from '#shared/policies/coordinating'
+import { mayUpload } from '#shared/policies/uploading'
 import type { Me } from '#shared/schemas/people'
 import { useApi } from '~/composables/useApi'
 
@@ -6,7 +9,8 @@ import { useApi } from '~/composables/useApi'
 export const useSessionStore = defineStore('session', () => {
   const me = ref<Me | null>(null)
   const isSignedIn = computed(() => me.value !== null)
-  const isCoordinator = computed(() => (me.value?.coordinatorOf.length ?? 0) > 0)
+  const isCoordinator = computed(() => hasDesk(me.value))
+  const isObserver = computed(() => mayUpload(me.value))
 
   async function load() {
     me.value = (await useApi().get<{ me: Me | null }>('/me')).me
@@ -21,5 +25,5 @@ export const useSessionStore = defineStore('session', () => {
     me.value = null
   }
 
-  return { me, isSignedIn, isCoordinator, load, signIn, signOut }
+  return { me, isSignedIn, isCoordinator, isObserver, load, signIn, signOut }
 })
