@@ -3,6 +3,7 @@ export { apparentPlace, apparentPlaces, type ApparentPlace, type CampbellElement
 export { fitOrbit } from './door/fit-orbit'
 export { predict } from './door/predict'
 export { LARGEST_MEASURES } from './door/validate-measures'
+export { randomStream, type RandomStream } from './random'
 export * from './time'
 export * from './types'
 export { ENGINE_VERSION } from './version'

@@ -2,7 +2,7 @@
 import { atan2, hypot } from '../elementary'
 import { planeProblem, PLANE_NAMES, parabolaProblem, reciprocalProblem } from '../models/plane'
 import { preparePlanePoints, rescalePlanePoints, type PlanePoints } from '../models/plane-measure'
-import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
+import { isInsideDomain, solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
 import type { FitResult, FitSettings, FitStart, PlaneMeasure } from '../types'
 import { judgePlane } from './judge-plane'
 import type { Report } from './progress'
@@ -39,11 +39,10 @@ function isSameDirection(a: number, b: number): boolean {
 }
 
 /** Shrinks e until the start is defined at every measured direction. */
-function insideDomain(points: PlanePoints, start: Float64Array): Float64Array {
+function shrunkInside(points: PlanePoints, start: Float64Array): Float64Array {
   const problem = planeProblem(points.used, points.diameterScale)
-  const residuals = new Float64Array(problem.rows)
   const shrunk = Float64Array.from(start)
-  for (let i = 0; i < 200 && !problem.evaluate(shrunk, residuals, null); i++) {
+  for (let i = 0; i < 200 && !isInsideDomain(problem, shrunk); i++) {
     shrunk[1] = shrunk[1]! * START_SHRINK
     shrunk[2] = shrunk[2]! * START_SHRINK
   }
@@ -51,9 +50,9 @@ function insideDomain(points: PlanePoints, start: Float64Array): Float64Array {
 }
 
 function startOf(points: PlanePoints, start: FitStart | undefined): Float64Array {
-  if (start) return insideDomain(points, Float64Array.from(start.state.values))
+  if (start) return shrunkInside(points, Float64Array.from(start.state.values))
   const linear = solveLeastSquares(reciprocalProblem(points.used), [1 / points.used[0]!.r, 0, 0]).values
-  if (linear[0]! > 0) return insideDomain(points, Float64Array.of(1 / linear[0]!, linear[1]! / linear[0]!, linear[2]! / linear[0]!))
+  if (linear[0]! > 0) return shrunkInside(points, Float64Array.of(1 / linear[0]!, linear[1]! / linear[0]!, linear[2]! / linear[0]!))
   const mean = points.used.reduce((sum, point) => sum + point.r, 0) / points.used.length
   return Float64Array.of(mean, 0, 0)
 }
@@ -61,9 +60,8 @@ function startOf(points: PlanePoints, start: FitStart | undefined): Float64Array
 /** χ² with e = 1 held; null where no parabola reaches every measured direction. */
 function parabolaChiSquare(points: PlanePoints, solution: Solution): number | null {
   const problem = parabolaProblem(points.used, points.diameterScale)
-  const residuals = new Float64Array(problem.rows)
   const start = Float64Array.of(solution.values[0]!, atan2(solution.values[2]!, solution.values[1]!))
-  if (!problem.evaluate(start, residuals, null)) return null
+  if (!isInsideDomain(problem, start)) return null
   return solveLeastSquares(problem, start).chiSquare
 }
 

@@ -11,6 +11,7 @@ import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncer
 import { carryBackOf, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
 import { relativeWarnings } from '../uncertainty/relative-warnings'
 import { skyResidual } from '../uncertainty/sky-residuals'
+import { straightnessOf } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
 import { stopSentence } from './stop-sentence'
 
@@ -18,6 +19,9 @@ import { stopSentence } from './stop-sentence'
 export const SKY_UNITS = {
   acrossArcsec: 'arcsec', alongArcsec: 'arcsec', thetaDeg: 'deg', rhoArcsec: 'arcsec', eastArcsec: 'arcsec', northArcsec: 'arcsec',
 } as const
+
+/** Arcs shorter than this part of a period are tested for being straight. */
+const SHORT_ARC_TURNS = 0.5
 
 export interface Judgement {
   /** Best first, at least one. */
@@ -119,6 +123,8 @@ export function judgeRelative(judgement: Judgement): FitResult {
   const published = publishedElements(elements, errors)
   const alternatives = alternativesOf(judgement, Math.max(1, partial.reducedChiSquare ?? 1), lastEpochYr)
   const isAtLimit = solution.values[1]! * solution.values[1]! + solution.values[2]! * solution.values[2]! > 0.95 * LARGEST_S * LARGEST_S
+  const isShortArc = isAtLimit || (statistics.arc.turns ?? 0) < SHORT_ARC_TURNS
+  const straightness = isShortArc ? straightnessOf(measures, referenceEpochYr) : undefined
   return {
     format: 1,
     kind: 'relative',
@@ -135,7 +141,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     residuals,
     alternatives,
     proposals: [],
-    warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit }),
+    warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
     state: {
       model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),
       covariance: publishedCovariance(errors.covariance, errors.scale.published), referenceEpochYr,

@@ -27,7 +27,7 @@ const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
 }
 
 /** Served models and weights of this engine version. */
-const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler'], plane: ['kepler'], equatorial: [] }
+const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: [] }
 const WEIGHTS: readonly string[] = ['stated', 'equal']
 
 function checkValue(name: keyof FitSettings, value: unknown): void {

@@ -38,6 +38,8 @@ export interface SkyMeasures {
 
 /** Errors of equal weight stand for this part of the median separation until the residuals tell. */
 const PROVISIONAL_SIGMA_PART = 0.01
+/** Separations below this say nothing about the size of an orbit, arcsec. */
+export const SMALLEST_RHO_ARCSEC = 1e-9
 
 function compareText(a: string, b: string): number {
   return a < b ? -1 : a > b ? 1 : 0
@@ -109,7 +111,7 @@ function neededErrors(m: SkyMeasure): number[] {
 const isStated = (value: number) => value === value
 
 function withEqualErrors(m: SkyMeasure, sigmaArcsec: number, medianRho: number): SkyMeasure {
-  const rho = m.rhoArcsec > 0 ? m.rhoArcsec : medianRho
+  const rho = m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho
   return { ...m, sigmaAlong: sigmaArcsec, sigmaThetaRad: sigmaArcsec / rho, sigmaNorth: sigmaArcsec, sigmaEast: sigmaArcsec, correlation: 0 }
 }
 
@@ -117,7 +119,7 @@ function withEqualErrors(m: SkyMeasure, sigmaArcsec: number, medianRho: number):
 function medianErrors(used: SkyMeasure[], medianRho: number): { along: number; across: number } {
   const rectangular = used.flatMap((m) => [m.sigmaNorth, m.sigmaEast])
   const along = median([...used.map((m) => m.sigmaAlong), ...rectangular].filter(isStated))
-  const across = median([...used.map((m) => m.sigmaThetaRad * (m.rhoArcsec > 0 ? m.rhoArcsec : medianRho)), ...rectangular].filter(isStated))
+  const across = median([...used.map((m) => m.sigmaThetaRad * (m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho)), ...rectangular].filter(isStated))
   return { along: isStated(along) ? along : across, across: isStated(across) ? across : along }
 }
 
@@ -127,7 +129,7 @@ function withMissingErrors(m: SkyMeasure, errors: { along: number; across: numbe
   return {
     ...m,
     sigmaAlong: fill(m.sigmaAlong, errors.along),
-    sigmaThetaRad: fill(m.sigmaThetaRad, errors.across / (m.rhoArcsec > 0 ? m.rhoArcsec : medianRho)),
+    sigmaThetaRad: fill(m.sigmaThetaRad, errors.across / (m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho)),
     sigmaNorth: fill(m.sigmaNorth, both),
     sigmaEast: fill(m.sigmaEast, both),
   }
@@ -157,7 +159,7 @@ export function prepareSkyMeasures(measures: readonly RelativeMeasure[], setting
   const stated = [...measures].sort(compareMeasures).map(withStatedErrors)
   const used = stated.filter((m) => m.status === 'used')
   const basis = basisOf(used, settings)
-  const medianRho = median(used.map((m) => m.rhoArcsec).filter((rho) => rho > 0))
+  const medianRho = median(used.map((m) => m.rhoArcsec).filter((rho) => rho >= SMALLEST_RHO_ARCSEC))
   const errors = medianErrors(used, medianRho)
   const all = stated.map((m) => {
     if (basis === 'scaled') return withEqualErrors(m, PROVISIONAL_SIGMA_PART * medianRho, medianRho)

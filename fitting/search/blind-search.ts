@@ -68,5 +68,7 @@ export function searchRelative(request: SearchRequest): Polished[] {
   const minima = searchWithSigns(request, asStated)
   if (!request.measures.some((measure) => measure.isAmbiguous)) return minima
   const chained = searchWithSigns({ ...request, onProgress: () => undefined }, chainedSigns(request.measures))
-  return keepDistinct([...minima, ...chained].sort(byChiSquare))
+  const all = keepDistinct([...minima, ...chained].sort(byChiSquare))
+  const limit = request.keepWithin(all[0]?.chiSquare ?? Infinity)
+  return all.filter((minimum) => minimum.chiSquare <= limit)
 }

@@ -59,6 +59,17 @@ function sumOfSquares(values: Float64Array): number {
   return sum
 }
 
+/**
+ * True where a solver can start.
+ * @param problem whitened residuals and Jacobian.
+ * @param values one a parameter.
+ * @returns whether the model is defined there with a finite χ².
+ */
+export function isInsideDomain(problem: LeastSquaresProblem, values: ArrayLike<number>): boolean {
+  const residuals = new Float64Array(problem.rows)
+  return problem.evaluate(Float64Array.from(values), residuals, null) && sumOfSquares(residuals) < Infinity
+}
+
 /** The accepted point with its linearisation. */
 class Iterate {
   readonly residuals: Float64Array

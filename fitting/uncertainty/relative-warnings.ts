@@ -4,6 +4,7 @@ import type { Alternative, Conic, Element, FitStatistics, Residual } from '../ty
 import { elementOf } from './error-scale'
 import type { RelativeElements } from './relative-elements'
 import { EDGE_ON_BELOW, type Errors } from './relative-motion'
+import type { Straightness } from './straightness'
 
 const POORLY_KNOWN_PERIOD = 0.1
 const HIGH_CONDITION = 1e4
@@ -11,6 +12,8 @@ const LONG_PERIOD_SPANS = 12
 const LARGE_SCATTER = 2
 const OUTLIER_SIGMA = 6
 const UNKNOWN_ANGLE_DEG = 30
+/** One-sided probability of so large a curvature on straight motion. */
+const STRAIGHT_ABOVE = 0.05
 
 export interface RelativeFindings {
   elements: RelativeElements
@@ -22,6 +25,8 @@ export interface RelativeFindings {
   alternatives: Alternative[]
   /** |(u, v)| met its limit. */
   isAtLimit: boolean
+  /** Test of straight motion; null where it could not be made, left out where the arc is long. */
+  straightness?: Straightness | null
 }
 
 const round = (value: number, digits: number) => value.toFixed(digits)
@@ -45,8 +50,17 @@ function aboutAngles({ elements, errors, published, conic }: RelativeFindings): 
   return warnings
 }
 
-function aboutArc({ elements, published, statistics, isAtLimit }: RelativeFindings): string[] {
-  const warnings: string[] = []
+/** Without a significant curvature the line is what the measures show. */
+function aboutStraightness(straightness: Straightness | null | undefined): string[] {
+  if (straightness === undefined) return []
+  if (straightness === null) return ['The arc is too short to tell an orbit from straight motion: fit the straight line as well.']
+  const { kappa, sigma, probability } = straightness
+  if (probability <= STRAIGHT_ABOVE) return []
+  return [`The motion so far is straight: curvature towards the primary is ${round(kappa / sigma, 1)} times its error. Publish the straight line, not this orbit.`]
+}
+
+function aboutArc({ elements, published, statistics, isAtLimit, straightness }: RelativeFindings): string[] {
+  const warnings: string[] = aboutStraightness(straightness)
   const turns = statistics.arc.turns ?? 0
   if (turns < 0.5) warnings.push(`The measures cover ${round(100 * turns, 0)} % of one period: elements of so short an arc change much with every new measure.`)
   if (turns * LONG_PERIOD_SPANS < 1 || isAtLimit) {

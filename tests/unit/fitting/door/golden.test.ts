@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
+import { fitOrbit } from '../../../../fitting'
 import { ENGINE_VERSION } from '../../../../fitting/version'
 import { goldenRequests, goldenTexts } from '../../../builders/engine-golden'
 import { goldenHashes } from '../../../builders/golden-hashes'
@@ -19,8 +20,10 @@ describe('golden results of the engine', () => {
   })
 
   it('are the same when the same requests are fitted again', () => {
-    expect(goldenHashes(goldenTexts()).whole).toBe(hashes.whole)
-  })
+    const some = goldenRequests().filter((_, i) => i % 8 === 0)
+    const twice = [some, some].map((requests) => requests.map((request) => JSON.stringify(fitOrbit(request))))
+    expect(twice[1]).toEqual(twice[0])
+  }, 60_000)
 
   it('number two hundred', () => {
     expect(goldenRequests()).toHaveLength(200)
