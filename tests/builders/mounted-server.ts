@@ -1,7 +1,7 @@
 import { once } from 'node:events'
 import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
-import { createApp, createRouter, getCookie, toNodeListener, useSession } from 'h3'
+import { createApp, createRouter, getCookie, setCookie, toNodeListener } from 'h3'
 import type { EventHandler, RouterMethod } from 'h3'
 import { openHouse } from '../../server/http/house'
 import type { SessionCookie } from '../../server/http/house'
@@ -13,6 +13,10 @@ export interface MountedServer {
   baseUrl: string
   /** A browser's view: keeps the cookie that it is given, sends it along. */
   client(): Client
+  /** The header of a browser that holds this session. */
+  cookieOf(sessionId: string): { cookie: string }
+  /** Serves another house from now on. */
+  serve(house: TestHouse): void
   close(): Promise<void>
 }
 
@@ -28,21 +32,19 @@ export interface Client {
   call(method: string, path: string, options?: CallOptions): Promise<{ status: number, headers: Headers, json: any, text: string }>
 }
 
-const SEALING = { password: 'a password for tests that is long enough', name: 'semilatus-session', cookie: { secure: false, sameSite: 'lax' as const, httpOnly: true } }
+const COOKIE = 'semilatus-test'
 
+/** Unsealed: the sealed cookie is nuxt-auth-utils' and needs Nitro; it is looked at end to end. */
 const sessionCookie: SessionCookie = {
-  async read(event) {
-    if (!getCookie(event, SEALING.name)) return null
-    const session = await useSession<{ sessionId?: string }>(event, SEALING)
-    return session.data.sessionId ?? null
-  },
-  write: async (event, sessionId) => void await (await useSession(event, SEALING)).update({ sessionId }),
-  clear: async event => void await (await useSession(event, SEALING)).clear(),
+  read: async event => getCookie(event, COOKIE) || null,
+  write: async (event, sessionId) => setCookie(event, COOKIE, sessionId),
+  clear: async event => setCookie(event, COOKIE, ''),
 }
 
 /** The real route files of the server on a port of their own, over a test house; one at a time in a process. */
 export async function mountServer(house: TestHouse): Promise<MountedServer> {
-  openHouse({ context: house.ctx, sessionCookie, actorOfSession })
+  const serve = ({ ctx }: TestHouse) => openHouse({ context: ctx, sessionCookie, actorOfSession })
+  serve(house)
   const router = createRouter()
   for (const { file, method, path } of await listRouteFiles()) {
     const { default: handler } = await import(/* @vite-ignore */ file) as { default: EventHandler }
@@ -56,6 +58,8 @@ export async function mountServer(house: TestHouse): Promise<MountedServer> {
   return {
     baseUrl,
     client: () => createClient(baseUrl),
+    cookieOf: sessionId => ({ cookie: `${COOKIE}=${sessionId}` }),
+    serve,
     async close() {
       openHouse(null)
       server.closeAllConnections()

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { mkdtemp, rm } from 'node:fs/promises'
+import { copyFile, mkdtemp, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { createContext, actingAs } from '../../server/context/context'
@@ -33,14 +33,24 @@ export interface TestHouse {
   events: NumberedEvent[]
   /** The context with this person as actor, with the roles that stand in the database now. */
   actAs(person: string | { id: string }): Promise<Context>
-  close(): Promise<void>
+  /** Where `close` leaves the database instead of deleting it. */
+  close(options?: { keepAs?: string }): Promise<void>
+}
+
+export interface TestHouseOptions {
+  /** Other ids and secrets for another seed. */
+  seed?: string
+  startAt?: string
+  /** Database file of a closed house to begin with a copy of; with another seed than that house had. */
+  copyOf?: string
 }
 
 /** A whole server side on a fresh SQLite file: real migrations, a clock that stands still, seeded ids, mail that is collected. */
-export async function createTestHouse({ seed = 'house', startAt = '2026-12-01T20:00:00.000Z' } = {}): Promise<TestHouse> {
+export async function createTestHouse({ seed = 'house', startAt = '2026-12-01T20:00:00.000Z', copyOf }: TestHouseOptions = {}): Promise<TestHouse> {
   const folder = await mkdtemp(join(tmpdir(), 'semilatus-'))
   const databaseFile = join(folder, 'semilatus.sqlite3')
-  await migrateToLatest(databaseFile)
+  if (copyOf === undefined) await migrateToLatest(databaseFile)
+  else await copyFile(copyOf, databaseFile)
   const database = openDatabase(databaseFile)
   const clock = createFakeClock(startAt)
   const events: NumberedEvent[] = []
@@ -66,8 +76,9 @@ export async function createTestHouse({ seed = 'house', startAt = '2026-12-01T20
     mailTransport,
     events,
     actAs: async person => actingAs(ctx, actorOf(await getPerson(database.reads, typeof person === 'string' ? person : person.id))),
-    async close() {
+    async close({ keepAs } = {}) {
       await database.close()
+      if (keepAs !== undefined) await copyFile(databaseFile, keepAs)
       await rm(folder, { recursive: true, force: true })
     },
   }

@@ -27,12 +27,10 @@ async function signedIn(password = person.password): Promise<Client> {
 }
 const me = async (client: Client) => (await client.call('GET', '/api/v1/me')).json.me
 
-test('signing in answers who one is, keeps it in an http-only cookie, and is recorded', async () => {
+test('signing in answers who one is, is remembered, and is recorded', async () => {
   const client = server.client()
   const answer = await client.call('POST', '/api/v1/session', { json: { email: person.email.toUpperCase(), password: person.password } })
   expect(answer.json.me).toMatchObject({ personId: person.id, displayName: 'T. Orrowin', isObserver: true, isAdministrator: false })
-  expect(answer.headers.get('set-cookie')).toMatch(/HttpOnly/i)
-  expect(answer.headers.get('set-cookie')).toMatch(/SameSite=Lax/i)
   expect(await me(client)).toMatchObject({ personId: person.id })
   const rows = await house.ctx.reads.selectFrom('audit_event').select(['actor_id', 'actor_kind']).where('event', '=', 'person.signed-in').where('actor_id', '=', person.id).execute()
   expect(rows).toHaveLength(2) // one from accepting the invitation
@@ -123,10 +121,4 @@ test('changing the password needs the present one, ends the other sessions and i
   await signedIn('another long password')
   const row = await house.ctx.reads.selectFrom('audit_event').select('detail').where('event', '=', 'password.changed').executeTakeFirstOrThrow()
   expect(JSON.parse(row.detail)).toEqual({ sessionsEnded: 2 }) // elsewhere, and the one of the invitation
-})
-
-test('a cookie that was tampered with is no session and no failure', async () => {
-  const answer = await server.client().call('GET', '/api/v1/me', { headers: { cookie: 'semilatus-session=Fe26.2*nonsense' } })
-  expect(answer.status).toBe(200)
-  expect(answer.json.me).toBeNull()
 })
