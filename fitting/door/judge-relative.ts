@@ -8,7 +8,7 @@ import type { Alternative, Element, FitResult, FitSettings, FitStatistics } from
 import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
-import { carryBackOf, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
+import { carryBackOf, combinedAngle, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
 import { relativeWarnings } from '../uncertainty/relative-warnings'
 import { skyResidual } from '../uncertainty/sky-residuals'
 import { straightnessOf } from '../uncertainty/straightness'
@@ -46,6 +46,8 @@ function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { condi
 function publishedElements(elements: RelativeElements, errors: Errors): Record<string, Element> {
   const published: Record<string, Element> = {}
   for (const name of ELEMENT_NAMES) published[name] = elementOf(elements.quantities[name], errors.covariance, errors.scale)
+  const combined = combinedAngle(elements, errors)
+  if (combined !== null) published[combined.name] = combined.element
   published.nextPeriastronTime = elementOf(elements.nextPeriastron, errors.covariance, errors.scale)
   return published
 }

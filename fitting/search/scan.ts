@@ -44,8 +44,8 @@ export function scanPeriods(spanYr: number, shortestYr: number): number[] {
     if (period < shortestYr) break
     periods.push(period)
   }
-  if (periods.length === 0) periods.push(shortestYr)
-  return periods
+  const above = periods.filter((period) => period >= shortestYr)
+  return above.length > 0 ? above : [shortestYr]
 }
 
 /** Points of one frequency: table bins at phase 0 and their information. */

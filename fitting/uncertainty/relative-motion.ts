@@ -9,7 +9,7 @@ import { trueFromMeanRad } from '../conic/anomalies'
 import { thieleInnesFromCampbell } from '../conic/thiele-innes'
 import { solveKeplerInto } from '../conic/kepler'
 import { atan2, cos, exp, hypot, PI, RAD, sin, TWO_PI } from '../elementary'
-import type { Conic, Constants, FitStatistics } from '../types'
+import type { Conic, Constants, Element, FitStatistics } from '../types'
 import { elementOf, type ErrorScale, type Quantity } from './error-scale'
 import type { RelativeElements } from './relative-elements'
 import type { CarryBack } from './sky-residuals'
@@ -18,6 +18,9 @@ import type { CarryBack } from './sky-residuals'
 export const EDGE_ON_BELOW = 0.05
 const CIRCLE_EXCLUDED_BELOW = 0.05
 const SKY_FRAME = 'north, east, towards the observer; the third component has no known sign without velocities'
+
+/** σ of the node above which node and argument of periastron are not determined apart. */
+const UNKNOWN_ANGLE_DEG = 30
 
 /** Covariance of unit variance and the factors to publish. */
 export interface Errors {
@@ -45,6 +48,26 @@ export function relativeConic(elements: RelativeElements, errors: Errors): Conic
     parabolaExcluded: null,
     circleExcluded,
     statement: `${elements.isCircle ? 'Circle' : 'Ellipse'}, bound by construction${circle}`,
+  }
+}
+
+/**
+ * The combination of ω and Ω that an orbit seen nearly face on still determines.
+ * @param elements of the solution.
+ * @param errors of the solution.
+ * @returns null where ω and Ω are determined apart or there are no errors; else the element by name: longitudeOfPeriastron (ω + Ω) for
+ * direct, argumentOfPeriastronMinusNode (ω − Ω) for retrograde motion.
+ * Source: Heintz 1978, Double Stars, ch. 4.
+ */
+export function combinedAngle(elements: RelativeElements, errors: Errors): { name: string; words: string; element: Element } | null {
+  if (errors.covariance === null) return null
+  const { sigma } = elementOf(elements.quantities.node, errors.covariance, errors.scale)
+  if (sigma !== null && sigma <= UNKNOWN_ANGLE_DEG) return null
+  const isDirect = cos(elements.inclinationRad) > 0
+  return {
+    name: isDirect ? 'longitudeOfPeriastron' : 'argumentOfPeriastronMinusNode',
+    words: isDirect ? 'ω + Ω' : 'ω − Ω',
+    element: elementOf(isDirect ? elements.sum : elements.difference, errors.covariance, errors.scale),
   }
 }
 

@@ -1,9 +1,8 @@
 /** Cautions in words that belong to a relative fit. Each says what, why it matters and what would help. */
 import { cos } from '../elementary'
 import type { Alternative, Conic, Element, FitStatistics, Residual } from '../types'
-import { elementOf } from './error-scale'
 import type { RelativeElements } from './relative-elements'
-import { EDGE_ON_BELOW, type Errors } from './relative-motion'
+import { combinedAngle, EDGE_ON_BELOW, type Errors } from './relative-motion'
 import type { Straightness } from './straightness'
 
 const POORLY_KNOWN_PERIOD = 0.1
@@ -11,7 +10,6 @@ const HIGH_CONDITION = 1e4
 const LONG_PERIOD_SPANS = 12
 const LARGE_SCATTER = 2
 const OUTLIER_SIGMA = 6
-const UNKNOWN_ANGLE_DEG = 30
 /** One-sided probability of so large a curvature on straight motion. */
 const STRAIGHT_ABOVE = 0.05
 
@@ -31,18 +29,12 @@ export interface RelativeFindings {
 
 const round = (value: number, digits: number) => value.toFixed(digits)
 
-function isUnknown(element: Element): boolean {
-  return element.sigma === null || element.sigma > UNKNOWN_ANGLE_DEG
-}
-
-function aboutAngles({ elements, errors, published, conic }: RelativeFindings): string[] {
+function aboutAngles({ elements, errors, conic }: RelativeFindings): string[] {
   const warnings: string[] = []
-  if (errors.covariance !== null && isUnknown(published.node!)) {
-    const isDirect = cos(elements.inclinationRad) > 0
-    const combined = elementOf(isDirect ? elements.sum : elements.difference, errors.covariance, errors.scale)
-    const sigma = combined.sigma === null ? '' : ` ± ${round(combined.sigma, 2)}°`
-    const combination = isDirect ? 'ω + Ω' : 'ω − Ω'
-    warnings.push(`The orbit is seen nearly face on: node and argument of periastron are not determined apart, only ${combination} = ${round(combined.value, 2)}°${sigma}.`)
+  const combined = combinedAngle(elements, errors)
+  if (combined !== null) {
+    const { value, sigma } = combined.element
+    warnings.push(`The orbit is seen nearly face on: node and argument of periastron are not determined apart, only ${combined.words} = ${round(value, 2)}°${sigma === null ? '' : ` ± ${round(sigma, 2)}°`}.`)
   }
   if (elements.isCircle) warnings.push('The orbit is a circle to rounding: ω is given as 0 and T as the passage of the node.')
   else if (conic.circleExcluded === false) warnings.push('A circle is not excluded: argument of periastron and time of periastron are poorly known; their combination, the phase, is not.')
