@@ -1,4 +1,4 @@
-import { parse as parseVue } from '@vue/compiler-sfc'
+import { parse as parseVue } from 'vue/compiler-sfc'
 import ts from 'typescript'
 
 /** One import of a source text, in whatever form it is written. */
