@@ -6,7 +6,7 @@ import type { Reads, Tx } from './connection'
 /** A batch's part: what of one batch belongs to one target. */
 export type BatchPart = Selectable<BatchTargetTable> & { target_name: string; programme_id: string }
 
-/** A part with the number of its measures and the reason of the last ruling on it. */
+/** A part with the number of its measures and the reason of the last ruling on it, unless it was sent again since. */
 export interface BatchPartOverview extends BatchPart {
   measures: number
   last_reason: string | null
@@ -55,8 +55,7 @@ export async function listPartOverviews(reads: Reads, batchIds: readonly string[
       sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch_target.batch_id
         AND r.target_id = batch_target.target_id AND r.state IN ('good', 'sent'))`.as('measures'),
       sql<string | null>`(SELECT u.reason FROM fit_batch_target f JOIN ruling u ON u.fit_id = f.fit_id
-        WHERE f.batch_target_id = batch_target.id AND u.decision <> 'consent'
-          AND (batch_target.sent_at IS NULL OR u.created_at >= batch_target.sent_at)
+        WHERE f.batch_target_id = batch_target.id AND u.decision <> 'consent' AND batch_target.state NOT IN ('sent', 'withdrawn')
         ORDER BY u.created_at DESC, u.id LIMIT 1)`.as('last_reason'),
     ])
     .where(sql<boolean>`batch_target.batch_id IN (SELECT value FROM json_each(${JSON.stringify(batchIds)}))`)

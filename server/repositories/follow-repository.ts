@@ -16,8 +16,3 @@ export async function deleteFollow(tx: Tx, personId: string, targetId: string): 
   const outcome = await tx.deleteFrom('follow').where('person_id', '=', personId).where('target_id', '=', targetId).executeTakeFirst()
   return outcome.numDeletedRows > 0n
 }
-
-export async function listFollowerIds(reads: Reads, targetId: string): Promise<string[]> {
-  const rows = await reads.selectFrom('follow').select('person_id').where('target_id', '=', targetId).orderBy('person_id').execute()
-  return rows.map(row => row.person_id)
-}
