@@ -7,6 +7,9 @@ export type Schema<Value> = z.ZodType<Value>
 /** What a schema answers: `ValueOf<typeof signInSchema>`. */
 export type ValueOf<S extends z.ZodType> = z.output<S>
 
+/** What a schema asks for, before defaults and conversions: `InputOf<typeof createTargetSchema>`. */
+export type InputOf<S extends z.ZodType> = z.input<S>
+
 export type Parsed<Value> = { ok: true, value: Value } | { ok: false, fields: ProblemField[] }
 
 /** Reads `input` by `schema`; what cannot be used comes back as paths with reasons, in the schema's order. */

@@ -23,8 +23,6 @@ export interface Room {
 
 const ENGINE_TYPES: Permit = { room: 'fitting', only: 'types' }
 const SHARED_TYPES: Permit = { room: 'shared', only: 'types' }
-/** What a schema of shared takes in and gives out. */
-const ZOD_TYPES: Permit = { room: 'zod', only: 'types' }
 const DB_TYPES: Permit = { room: 'server/db', only: 'types' }
 const OF_SERVER = [
   'server/routes', 'server/http', 'server/context', 'server/services', 'server/domain', 'server/repositories', 'server/db', 'server/db/migrations',
@@ -54,7 +52,7 @@ export const ROOMS: readonly Room[] = [
     places: ['app'],
     purpose: 'the browser; it reaches the server over HTTP only',
     rooms: ['shared', 'fitting'],
-    packages: [ZOD_TYPES, 'vue', 'vue-router', 'pinia', 'nuxt', '#app', '#imports', '#components', '@vueuse/core', 'reka-ui', '@tanstack/vue-table', 'plotly.js-cartesian-dist-min', '@fontsource/*', '@fontsource-variable/*'],
+    packages: ['vue', 'vue-router', 'pinia', 'nuxt', '#app', '#imports', '#components', '@vueuse/core', 'reka-ui', '@tanstack/vue-table', 'plotly.js-cartesian-dist-min', '@fontsource/*', '@fontsource-variable/*'],
   },
   {
     name: 'server/routes',
@@ -87,7 +85,7 @@ export const ROOMS: readonly Room[] = [
       // The version is part of what makes two fits the same; the engine itself runs in the workers.
       { room: 'fitting', only: ['predict', 'ENGINE_VERSION'] },
     ],
-    packages: [ZOD_TYPES, { room: 'node:crypto', only: ['createHash', 'createHmac', 'timingSafeEqual'] }],
+    packages: [{ room: 'node:crypto', only: ['createHash', 'createHmac', 'timingSafeEqual'] }],
   },
   {
     name: 'server/domain',

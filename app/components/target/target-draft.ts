@@ -1,4 +1,4 @@
-import type { z } from 'zod'
+import type { InputOf } from '#shared/schemas/parse'
 import type { createTargetSchema } from '#shared/schemas/targets'
 
 /** What the form for a new target holds: text as typed. */
@@ -20,7 +20,7 @@ export function blankTarget(programmeId: string): TargetDraft {
 }
 
 /** The body for POST /targets; fields of the other kind are left out, empty ones go as null. */
-export function targetBody(draft: TargetDraft): z.input<typeof createTargetSchema> {
+export function targetBody(draft: TargetDraft): InputOf<typeof createTargetSchema> {
   const common = {
     programmeId: draft.programmeId,
     kind: draft.kind,
