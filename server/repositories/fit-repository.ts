@@ -64,14 +64,18 @@ export async function listLatestFits(reads: Reads, targetIds: readonly string[])
 
 /** Finished fits of these programmes that nobody has ruled on, the longest waiting first. */
 export async function listFitsForDesk(reads: Reads, programmeIds: readonly string[]): Promise<FitRecord[]> {
-  return fits(reads)
-    .innerJoin('target', 'target.id', 'fit.target_id')
-    .where(sql<boolean>`target.programme_id IN (SELECT value FROM json_each(${JSON.stringify(programmeIds)}))`)
-    .where('fit.state', 'in', ['done', 'failed'])
-    .where(sql<boolean>`NOT EXISTS (SELECT 1 FROM ruling r WHERE r.fit_id = fit.id AND r.decision <> 'consent')`)
-    .orderBy('fit.created_at')
-    .orderBy('fit.id')
-    .execute()
+  return fits(reads).where(waitsOnDesk(programmeIds)).orderBy('fit.created_at').orderBy('fit.id').execute()
+}
+
+export async function countFitsForDesk(reads: Reads, programmeIds: readonly string[]): Promise<number> {
+  const { count } = await reads.selectFrom('fit').select(({ fn }) => fn.countAll<number>().as('count')).where(waitsOnDesk(programmeIds)).executeTakeFirstOrThrow()
+  return count
+}
+
+function waitsOnDesk(programmeIds: readonly string[]) {
+  return sql<boolean>`fit.state IN ('done', 'failed')
+    AND fit.target_id IN (SELECT id FROM target WHERE programme_id IN (SELECT value FROM json_each(${JSON.stringify(programmeIds)})))
+    AND NOT EXISTS (SELECT 1 FROM ruling r WHERE r.fit_id = fit.id AND r.decision <> 'consent')`
 }
 
 /** The fit whose edition is in force. */

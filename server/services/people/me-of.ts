@@ -2,7 +2,7 @@ import type { Me } from '#shared/schemas/people'
 import { hasDesk } from '#shared/policies/coordinating'
 import type { Context } from '../../context/context'
 import { signInRequired } from '../../errors/app-error'
-import { listFitsForDesk } from '../../repositories/fit-repository'
+import { countFitsForDesk } from '../../repositories/fit-repository'
 import { getPerson } from '../../repositories/person-repository'
 
 /** The actor as their own page shows them. Throws sign-in-required for a visitor. */
@@ -10,6 +10,6 @@ export async function meOf(ctx: Context): Promise<Me> {
   const { actor } = ctx
   if (!actor) throw signInRequired()
   const person = await getPerson(ctx.reads, actor.personId)
-  const deskCount = hasDesk(actor) ? (await listFitsForDesk(ctx.reads, actor.coordinatorOf)).length : 0
+  const deskCount = hasDesk(actor) ? await countFitsForDesk(ctx.reads, actor.coordinatorOf) : 0
   return { ...actor, displayName: person.display_name, email: person.email ?? '', deskCount }
 }
