@@ -7,7 +7,6 @@ const SYMBOLS: Record<string, string> = {
   'arcsec/yr': '″/yr',
   'deg/yr': '°/yr',
   '1': '',
-  'unit': '',
 }
 
 /**

@@ -1,5 +1,5 @@
 import type { Element } from '../../fitting/types'
-import { decimalsOf, formatNumber } from './number-text'
+import { decimalsOf, formatDigits, formatNumber } from './number-text'
 import { unitSymbol } from './unit-symbol'
 
 /** A value beside its standard error, both with the same decimals: the error keeps two significant digits. */
@@ -27,14 +27,13 @@ export function decimalsForSigma(sigma: number | null): number | null {
  * Writes a value and its standard error with the same decimals.
  * @param value in any unit
  * @param sigma standard error in the same unit; null where none is known
- * @returns such as { value: "62.41", sigma: "0.38" }; an error below 1e-9 is written "<0.000000001"
+ * @returns such as { value: "62.41", sigma: "0.38" }; an error below 1e-9 is written "<0.000000001"; without an error five significant
+ * digits, zeros at their end left out
  */
 export function formatValueAndSigma(value: number, sigma: number | null): ValueAndSigma {
   const decimals = decimalsForSigma(sigma)
   if (sigma === null || decimals === null) {
-    const size = Math.abs(Number(value.toPrecision(DIGITS_WITHOUT_SIGMA)))
-    const plain = Math.min(MOST_DECIMALS, Math.max(0, decimalsOf(size || 1, DIGITS_WITHOUT_SIGMA)))
-    return { value: formatNumber(value, plain), sigma: null }
+    return { value: formatDigits(value, DIGITS_WITHOUT_SIGMA).replace(/(\.\d*?)0+$/, '$1').replace(/\.$/, ''), sigma: null }
   }
   const sigmaText = formatNumber(sigma, decimals)
   return { value: formatNumber(value, decimals), sigma: Number(sigmaText) === 0 ? `<${formatNumber(10 ** -MOST_DECIMALS, MOST_DECIMALS)}` : sigmaText }

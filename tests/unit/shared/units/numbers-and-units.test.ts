@@ -45,6 +45,7 @@ describe('a value and its standard error', () => {
 
   it('without an error keeps five digits and shows none', () => {
     for (const none of [null, 0, Number.NaN]) expect(formatValueAndSigma(0.861234, none)).toEqual({ value: '0.86123', sigma: null })
+    expect([0.5, 10, -1.25, 0, 123456].map(value => formatValueAndSigma(value, null).value)).toEqual(['0.5', '10', '−1.25', '0', '123460'])
   })
 
   it('with an error too small to show says so', () => {
@@ -64,7 +65,7 @@ describe('a value and its standard error', () => {
     expect(formatElement(element(62.41, 0.38, 'yr'))).toBe('62.41 ± 0.38 yr')
     expect(formatElement(element(0.861, 0.004, 'arcsec'))).toBe('0.8610 ± 0.0040″')
     expect(formatElement(element(103.4, 3.1, 'deg'))).toBe('103.4 ± 3.1°')
-    expect(formatElement(element(0.5, null, ''))).toBe('0.50000')
+    expect(formatElement(element(0.5, null, ''))).toBe('0.5')
     expect(formatElement(element(2009.3, 0.04, 'Julian year'))).toBe('2009.300 ± 0.040 yr')
     expect(unitSymbol('constructor')).toBe('constructor')
   })
