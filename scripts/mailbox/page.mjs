@@ -8,6 +8,8 @@ import { headerOf } from './read-message.mjs'
 export const STYLE = `body { max-width: 46rem; margin: 2rem auto; padding: 0 1rem; font: 1rem/1.5 system-ui, sans-serif; color: #1e2a38; background: #f6f3ec }
 table { border-collapse: collapse; width: 100% }
 th, td { text-align: left; vertical-align: top; padding: .4rem .75rem .4rem 0; border-bottom: 1px solid #d9d2c3 }
+th { white-space: nowrap }
+td { overflow-wrap: anywhere }
 pre { white-space: pre-wrap; overflow-wrap: anywhere; background: #fffdf8; border: 1px solid #d9d2c3; padding: 1rem }
 a { color: #0b6e6e }
 `

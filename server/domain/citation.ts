@@ -1,3 +1,5 @@
+import { joinWords } from '../../shared/units/list-text'
+
 const NAMES_IN_SENTENCE = 8
 
 export interface CitedEdition {
@@ -21,11 +23,6 @@ export function citationSentence(edition: CitedEdition): string {
 /** A long list ends in the number of those left; the edition itself names everybody. */
 function creditedNames(names: readonly string[]): string {
   if (names.length === 0) return 'observers who are not named'
-  if (names.length <= NAMES_IN_SENTENCE) return listed(names)
+  if (names.length <= NAMES_IN_SENTENCE) return joinWords(names)
   return `${names.slice(0, NAMES_IN_SENTENCE).join(', ')} and ${names.length - NAMES_IN_SENTENCE} others`
-}
-
-/** "A", "A and B", "A, B and C". */
-function listed(names: readonly string[]): string {
-  return names.length === 1 ? names[0]! : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
 }

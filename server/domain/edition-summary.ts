@@ -1,8 +1,5 @@
 import type { Element, FitResult } from '../../fitting/types'
-import { formatUncertain, formatValue } from '../../shared/units/uncertain-text'
-
-/** How a unit stands behind a number in a sentence; a sign follows it closely. */
-const UNIT_TEXT: Record<string, string> = { arcsec: '″', deg: '°', arcmin: '′', yr: ' yr' }
+import { formatElement, formatValueAndSigma, withUnit } from '../../shared/units/value-and-sigma'
 
 /** One line of what an edition says, for lists and mail: "P 62.41 ± 0.38 yr, e 0.482, a 0.861″". */
 export function editionSummary(result: FitResult): string {
@@ -14,22 +11,25 @@ export function editionSummary(result: FitResult): string {
 
 function pairParts({ elements }: FitResult): (string | null)[] {
   return [
-    said('P', elements.period, true),
-    said('e', elements.eccentricity, false),
-    said('a', elements.semiMajorAxis, false),
+    said('P', elements.period, formatElement),
+    said('e', elements.eccentricity, formatAlone),
+    said('a', elements.semiMajorAxis, formatAlone),
   ]
 }
 
 function planeParts({ elements }: FitResult): (string | null)[] {
   return [
-    said('e', elements.eccentricity, true),
-    said('p', elements.semiLatusRectum, true),
-    said('periapsis toward', elements.periapsisDirection, true),
+    said('e', elements.eccentricity, formatElement),
+    said('p', elements.semiLatusRectum, formatElement),
+    said('periapsis toward', elements.periapsisDirection, formatElement),
   ]
 }
 
-function said(name: string, element: Element | undefined, withSigma: boolean): string | null {
-  if (element === undefined) return null
-  const value = withSigma ? formatUncertain(element.value, element.sigma) : formatValue(element.value, element.sigma)
-  return `${name} ${value}${UNIT_TEXT[element.unit] ?? (element.unit === '' || element.unit === '1' ? '' : ` ${element.unit}`)}`
+function said(name: string, element: Element | undefined, format: (element: Element) => string): string | null {
+  return element === undefined ? null : `${name} ${format(element)}`
+}
+
+/** With the decimals that its error allows, without the error. */
+function formatAlone({ value, sigma, unit }: Element): string {
+  return withUnit(formatValueAndSigma(value, sigma).value, unit)
 }

@@ -3,6 +3,7 @@ import { writeCsv } from '../../shared/csv/write-csv'
 import type { CsvColumn } from '../../shared/csv/write-csv'
 import type { EditionSnapshot } from '../../shared/schemas/editions'
 import type { FitMeasureView } from '../../shared/schemas/fits'
+import { elementFamily, labelledElements } from '../../shared/units/element-labels'
 
 type MeasureRow = FitMeasureView & { target: string; asked: RelativeMeasure | PlaneMeasure | undefined }
 
@@ -79,9 +80,13 @@ function quadrantOf({ asked }: MeasureRow): string | null {
   return asked.position.quadrant ?? null
 }
 
+/** What is predicted, in reading order; canonical JSON keeps its keys by the alphabet. */
+const PREDICTED = ['thetaDeg', 'rhoArcsec', 'eastArcsec', 'northArcsec', 'r'] as const
+
 /** The predictions with their errors: over Julian years for a pair, over φ in the plane of the orbit. */
 export function ephemerisCsv(snapshot: EditionSnapshot): string {
-  const names = [...new Set(snapshot.predictions.flatMap(prediction => Object.keys(prediction.values)))]
+  const given = new Set(snapshot.predictions.flatMap(prediction => Object.keys(prediction.values)))
+  const names = PREDICTED.filter(name => given.has(name))
   const columns: CsvColumn<Prediction>[] = [
     { name: snapshot.target.kind === 'plane' ? 'phi_deg' : 'julian_year', cell: prediction => prediction.at },
     ...names.flatMap(name => [
@@ -96,13 +101,13 @@ export function ephemerisCsv(snapshot: EditionSnapshot): string {
 /** The elements with their errors: the published one, the formal one and the scaled one. */
 export function elementsCsv(snapshot: EditionSnapshot): string {
   return writeCsv([
-    { name: 'element', cell: ([name]) => snakeCase(name) },
-    { name: 'value', cell: ([, element]) => element.value },
-    { name: 'sigma', cell: ([, element]) => element.sigma },
-    { name: 'sigma_formal', cell: ([, element]) => element.sigmaFormal },
-    { name: 'sigma_scaled', cell: ([, element]) => element.sigmaScaled },
-    { name: 'unit', cell: ([, element]) => element.unit },
-  ], Object.entries(snapshot.result.elements))
+    { name: 'element', cell: ({ label }) => snakeCase(label.name) },
+    { name: 'value', cell: ({ element }) => element.value },
+    { name: 'sigma', cell: ({ element }) => element.sigma },
+    { name: 'sigma_formal', cell: ({ element }) => element.sigmaFormal },
+    { name: 'sigma_scaled', cell: ({ element }) => element.sigmaScaled },
+    { name: 'unit', cell: ({ element }) => element.unit },
+  ], labelledElements(snapshot.result.elements, elementFamily(snapshot.result)))
 }
 
 function snakeCase(name: string): string {

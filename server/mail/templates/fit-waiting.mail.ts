@@ -21,6 +21,6 @@ export function fitWaitingMail(fit: FitWaitingLetter): LetterText {
   return letter(`${fit.targetName}: fit ${fit.fitNumber} waits on the desk`, [
     opening,
     fit.headline,
-    `Judge its residuals and rule:\n${fit.fitUrl}`,
+    `${fit.hasFailed ? 'See what is missing, and return or keep its measures' : 'Judge its residuals and rule'}:\n${fit.fitUrl}`,
   ])
 }
