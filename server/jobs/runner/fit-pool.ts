@@ -31,21 +31,30 @@ export function createFitPool({ workerUrl, timeLimitMs = TIME_LIMIT_MS }: FitPoo
     idleTimeout: 30_000,
     resourceLimits: { maxOldGenerationSizeMb: MEMORY_LIMIT_MB },
   })
+  // A worker that breaks down outside of a task, such as while it loads, is told to the pool and to no task.
+  const running = new Set<AbortController>()
+  pool.on('error', (error: unknown) => {
+    for (const breakdown of running) breakdown.abort(error)
+  })
   return {
     async computeFit(request, { onProgress, signal }) {
+      const breakdown = new AbortController()
+      running.add(breakdown)
       const { port1, port2 } = new MessageChannel()
       const timeLimit = AbortSignal.timeout(timeLimitMs)
       port1.on('message', (step: Progress) => onProgress(step))
       try {
-        return await pool.run({ request, port: port2 }, { transferList: [port2], signal: AbortSignal.any([signal, timeLimit]) }) as FitOutcome
+        return await pool.run({ request, port: port2 }, { transferList: [port2], signal: AbortSignal.any([signal, timeLimit, breakdown.signal]) }) as FitOutcome
       }
       catch (error) {
         if (signal.aborted) throw signal.reason
+        if (breakdown.signal.aborted) throw breakdown.signal.reason
         if (timeLimit.aborted) return { ok: false, refusal: timeRefusal(timeLimitMs) }
         if (isOutOfMemory(error)) return { ok: false, refusal: MEMORY_REFUSAL }
         throw error
       }
       finally {
+        running.delete(breakdown)
         port1.close()
       }
     },
