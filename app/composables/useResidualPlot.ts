@@ -3,12 +3,15 @@ import type { MarkShape, ObserverMark } from '#shared/drawing/observer-marks'
 import { axisRange, axisTicksFor, residualTicks } from '#shared/drawing/residual-sheet'
 import { halfHeight } from '#shared/drawing/residual-series'
 import type { ResidualChart, ResidualPoint, ResidualSeries } from '#shared/drawing/residual-series'
+import { formatSigned } from '#shared/units/number-text'
 import type { PlotColours } from './usePlotColours'
 
 const SYMBOLS: Record<MarkShape, string> = {
   circle: 'circle', square: 'square-open', triangle: 'triangle-up', diamond: 'diamond-open',
   cross: 'x-thin-open', 'turned-triangle': 'triangle-down-open', plus: 'cross-thin-open', star: 'asterisk-open',
 }
+/** A triangle or a diamond of the same nominal size looks smaller. */
+const SIZES_PX: Partial<Record<MarkShape, number>> = { triangle: 11, 'turned-triangle': 11, diamond: 10 }
 const ROW_GAP = 0.14
 
 interface ResidualPlotInput {
@@ -55,7 +58,7 @@ function marksTrace(series: ResidualSeries, axes: Axes, { lookOf, aside }: Resid
     x: series.points.map(point => point.at), y: series.points.map(point => point.value),
     customdata: series.points.map(point => point.id),
     marker: {
-      size: 9,
+      size: looks.map(look => SIZES_PX[look?.shape ?? 'circle'] ?? 8.5),
       symbol: looks.map(look => SYMBOLS[look?.shape ?? 'circle']),
       color: looks.map(look => hues[look?.hue ?? 0]),
       line: { width: looks.map(look => (SYMBOLS[look?.shape ?? 'circle'].endsWith('open') ? 1.9 : 0)) },
@@ -81,6 +84,11 @@ function ringTrace({ points }: ResidualSeries, axes: Axes, chosen: string | null
   }
 }
 
+function signedTicks(series: ResidualSeries) {
+  const { values, decimals } = residualTicks(series)
+  return { tickvals: values, ticktext: values.map(value => formatSigned(value, decimals)) }
+}
+
 function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotColours): PlotLayout {
   const [least, greatest] = axisRange(chart)
   const ticks = axisTicksFor(chart, widthPx)
@@ -91,10 +99,10 @@ function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotCol
   const quiet = { gridcolor: colours.grid, linecolor: colours.rule, tickcolor: colours.rule, zeroline: false, fixedrange: false }
   const yAxes = Object.fromEntries(chart.series.map((series, row) => [row === 0 ? 'yaxis' : `yaxis${row + 1}`, {
     ...quiet, domain: [tops[row]! - height, tops[row]!], range: [-halfHeight(series), halfHeight(series)],
-    tickvals: residualTicks(series).values, zeroline: true, zerolinecolor: colours.orbit, zerolinewidth: 1.4, tickformat: '+', ticks: '',
+    ...signedTicks(series), zeroline: true, zerolinecolor: colours.orbit, zerolinewidth: 1.4, ticks: '',
   }]))
   return {
-    paper_bgcolor: 'rgba(0,0,0,0)', plot_bgcolor: 'rgba(0,0,0,0)', showlegend: false, autosize: true, uirevision: 'kept',
+    paper_bgcolor: colours.sheet, plot_bgcolor: colours.sheet, showlegend: false, autosize: true, uirevision: 'kept',
     font: { family: '"Nunito Sans Variable", sans-serif', size: 12, color: colours.ink2 },
     margin: { l: 54, r: 16, t: 26, b: 30 }, hovermode: 'closest',
     hoverlabel: { bgcolor: colours.sheet, bordercolor: colours.ink2, font: { color: colours.ink } },
@@ -104,7 +112,7 @@ function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotCol
     ...yAxes,
     annotations: chart.series.map((series, row) => ({
       xref: 'paper', yref: 'paper', x: 0, y: tops[row], xanchor: 'left', yanchor: 'bottom', yshift: 4, showarrow: false,
-      text: `${series.name} (<i>${series.symbols}</i>), ${series.unit}`, font: { color: colours.ink2, size: 13 },
+      text: `${series.name} (${series.symbols}), ${series.unit}`, font: { color: colours.ink2, size: 13 },
     })),
     shapes: isNowShown ? [{ type: 'line', xref: 'x', yref: 'paper', x0: nowYr, x1: nowYr, y0: 0, y1: 1, line: { color: colours.ink2, width: 1, dash: 'dot' } }] : [],
   }

@@ -7,7 +7,7 @@ import { scaleBar, type ScaleBar } from './scale-bar'
 import { SKY_SHEET_PX, type DrawnMeasure } from './sky-sheet'
 import { pathData } from './thumbnail-svg'
 
-const MARGIN_PX = 52
+const MARGIN_PX = 60
 const LONGEST_BAR_PX = 190
 
 /** The conic in its own plane, in pixels of a square sheet: φ = 0 to the right, φ growing counter-clockwise. */

@@ -7,7 +7,10 @@ import { skyMeasures, skyNodes, skyPredictions } from './sky-geometry'
 import { pathData } from './thumbnail-svg'
 
 export const SKY_SHEET_PX = 560
-const MARGIN_PX = 52
+const MARGIN_PX = 60
+const EDGE_PX = 4
+/** A letter of a label at its largest, on a phone, in the sheet's own pixels. */
+const WIDEST_LETTER_PX = 9.6
 const LONGEST_BAR_PX = 190
 /** Predictions closer together on paper than this would print their years over each other. */
 const LEAST_LABEL_DISTANCE_PX = 34
@@ -99,8 +102,14 @@ function drawnPredictions(predictions: readonly Prediction[], frame: DrawingFram
 function withLabel(at: Point, inside: Point, text: string): { at: Point; label: DrawnLabel } {
   const away = Math.hypot(at.x - inside.x, at.y - inside.y) || 1
   const [dx, dy] = [(at.x - inside.x) / away, (at.y - inside.y) / away]
-  const x = Math.min(SKY_SHEET_PX - 24, Math.max(24, at.x + dx * 17))
-  const y = Math.min(SKY_SHEET_PX - 8, Math.max(16, at.y + dy * 20 + 4))
-  const anchor = x > SKY_SHEET_PX - 90 ? 'end' : x < 90 ? 'start' : Math.abs(dx) < 0.35 ? 'middle' : dx > 0 ? 'start' : 'end'
+  const anchor = Math.abs(dx) < 0.35 ? 'middle' : dx > 0 ? 'start' : 'end'
+  const widthPx = text.length * WIDEST_LETTER_PX
+  const before = { start: 0, middle: widthPx / 2, end: widthPx }[anchor]
+  const x = within(at.x + dx * 15, EDGE_PX + before, SKY_SHEET_PX - EDGE_PX - (widthPx - before))
+  const y = within(at.y + dy * 20 + 4, 16, SKY_SHEET_PX - 8)
   return { at, label: { text, at: { x, y }, anchor } }
+}
+
+function within(value: number, least: number, greatest: number): number {
+  return Math.min(greatest, Math.max(least, value))
 }
