@@ -1,5 +1,5 @@
 import { sql } from 'kysely'
-import type { Insertable, Selectable, Updateable } from 'kysely'
+import type { Insertable, RawBuilder, Selectable, Updateable } from 'kysely'
 import type { MailOutTable } from '../db/schema'
 import { notFound } from '../errors/app-error'
 import type { Reads, Tx } from './connection'
@@ -29,8 +29,7 @@ export async function findLetter(reads: Reads, id: string): Promise<LetterRecord
     .innerJoin('person', 'person.id', 'mail_out.person_id')
     .selectAll('mail_out')
     .select(sql<string | null>`CASE person.state WHEN 'active' THEN person.email END`.as('email'))
-    .select(sql<0 | 1>`EXISTS (SELECT 1 FROM mail_stop s WHERE s.person_id = mail_out.person_id
-      AND (s.target_id IS NULL OR s.target_id = mail_out.target_id))`.as('is_stopped'))
+    .select(silenced(sql.ref('mail_out.person_id'), sql.ref('mail_out.target_id')).as('is_stopped'))
     .where('mail_out.id', '=', id)
     .executeTakeFirst()
 }
@@ -53,14 +52,32 @@ export async function getLetterByUnsubscribeHash(reads: Reads, hash: string): Pr
   return row
 }
 
-export async function listMailStops(reads: Reads, personId: string): Promise<{ target_id: string | null }[]> {
-  return reads.selectFrom('mail_stop').select('target_id').where('person_id', '=', personId).execute()
+/** Whether a person asked for no mail about a target; without a target, whether for none at all. */
+export async function isSilenced(reads: Reads, personId: string, targetId: string | null): Promise<boolean> {
+  const { rows } = await sql<{ is_silenced: 0 | 1 }>`SELECT ${silenced(sql`${personId}`, sql`${targetId}`)} AS is_silenced`.execute(reads)
+  return rows[0]?.is_silenced === 1
+}
+
+/** Every stop ends the follows that it covers, so a follow that stands was asked for after it, and is heard. */
+function silenced(personId: RawBuilder<unknown>, targetId: RawBuilder<unknown>): RawBuilder<0 | 1> {
+  return sql<0 | 1>`(
+    EXISTS (SELECT 1 FROM mail_stop s WHERE s.person_id = ${personId} AND (s.target_id IS NULL OR s.target_id = ${targetId}))
+    AND NOT EXISTS (SELECT 1 FROM follow w WHERE w.person_id = ${personId} AND w.target_id = ${targetId}))`
 }
 
 /** True where the stop is new. */
 export async function insertMailStop(tx: Tx, stop: { id: string; person_id: string; target_id: string | null; created_at: string }): Promise<boolean> {
   const outcome = await tx.insertInto('mail_stop').values(stop).onConflict(c => c.doNothing()).executeTakeFirst()
   return (outcome.numInsertedOrUpdatedRows ?? 0n) > 0n
+}
+
+export async function followsAnything(reads: Reads, personId: string): Promise<boolean> {
+  return await reads.selectFrom('follow').select('person_id').where('person_id', '=', personId).limit(1).executeTakeFirst() !== undefined
+}
+
+/** Ends what a person follows: one target, or all of them. */
+export async function endFollows(tx: Tx, personId: string, targetId: string | null): Promise<void> {
+  await tx.deleteFrom('follow').where('person_id', '=', personId).$if(targetId !== null, query => query.where('target_id', '=', targetId)).execute()
 }
 
 /** Stops what waits for a person: about one target, or all of it. */
@@ -90,7 +107,7 @@ export async function listEditionRecipients(reads: Reads, { targetId, fitId }: {
     LEFT JOIN credited c ON c.person_id = p.id
     WHERE p.state = 'active' AND p.email IS NOT NULL
       AND (c.person_id IS NOT NULL OR EXISTS (SELECT 1 FROM follow w WHERE w.person_id = p.id AND w.target_id = ${targetId}))
-      AND NOT EXISTS (SELECT 1 FROM mail_stop s WHERE s.person_id = p.id AND (s.target_id IS NULL OR s.target_id = ${targetId}))
+      AND NOT ${silenced(sql.ref('p.id'), sql`${targetId}`)}
     ORDER BY p.id`.execute(reads)
   return rows
 }

@@ -1,4 +1,4 @@
-import { listMailStops } from '../../repositories/mail-repository'
+import { isSilenced } from '../../repositories/mail-repository'
 import { findPerson } from '../../repositories/person-repository'
 import type { Tx } from '../../context/context'
 
@@ -6,6 +6,5 @@ import type { Tx } from '../../context/context'
 export async function mayBeMailed(tx: Tx, personId: string, targetId: string): Promise<boolean> {
   const person = await findPerson(tx, personId)
   if (!person || person.state !== 'active' || person.email === null) return false
-  const stops = await listMailStops(tx, personId)
-  return !stops.some(stop => stop.target_id === null || stop.target_id === targetId)
+  return !await isSilenced(tx, personId, targetId)
 }

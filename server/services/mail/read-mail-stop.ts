@@ -1,7 +1,7 @@
 import type { MailStopView } from '#shared/schemas/mail'
 import type { Context } from '../../context/context'
 import { unsubscribeHash } from '../../mail/outbox/queue-mail'
-import { getLetterByUnsubscribeHash, listMailStops } from '../../repositories/mail-repository'
+import { followsAnything, getLetterByUnsubscribeHash, isSilenced } from '../../repositories/mail-repository'
 
 /**
  * What the link of a letter can stop, and what is stopped already. Whoever holds the link may call it; it names no person.
@@ -9,9 +9,8 @@ import { getLetterByUnsubscribeHash, listMailStops } from '../../repositories/ma
  */
 export async function readMailStop(ctx: Context, token: string): Promise<MailStopView> {
   const letter = await getLetterByUnsubscribeHash(ctx.reads, unsubscribeHash(token))
-  const stops = await listMailStops(ctx.reads, letter.person_id)
-  const isAllStopped = stops.some(stop => stop.target_id === null)
-  const isTargetStopped = isAllStopped || (letter.target_id !== null && stops.some(stop => stop.target_id === letter.target_id))
+  const isAllStopped = await isSilenced(ctx.reads, letter.person_id, null) && !await followsAnything(ctx.reads, letter.person_id)
+  const isTargetStopped = isAllStopped || (letter.target_id !== null && await isSilenced(ctx.reads, letter.person_id, letter.target_id))
   return { targetName: letter.target_name, isTargetStopped, isAllStopped, sentence: sentenceFor(letter.target_name, isTargetStopped, isAllStopped) }
 }
 

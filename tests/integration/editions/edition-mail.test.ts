@@ -1,5 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import { followTarget } from '../../../server/services/targets/follow-target'
+import { readMailStop } from '../../../server/services/mail/read-mail-stop'
 import { stopMail } from '../../../server/services/mail/stop-mail'
 import { withdrawEdition } from '../../../server/services/editions/withdraw-edition'
 import { addPerson } from '../../builders/people'
@@ -60,6 +61,28 @@ describe('the letters about an edition', () => {
     await runJobs(house.ctx, house.mailTransport)
     expect(house.mail.slice(before).map(mail => mail.to)).not.toContain(pair.member.email)
     expect(house.mail.slice(before).some(mail => mail.subject.includes('edition 2'))).toBe(true)
+  })
+
+  it('come again to who follows the target anew after stopping all mail, and about that target alone', async () => {
+    await followTarget(pair.member.ctx, pair.target.id)
+    await publish(pair.coordinator.ctx, await acceptedPairFit(pair))
+    await runJobs(house.ctx, house.mailTransport)
+    const token = house.mail.find(mail => mail.to === pair.member.email)!.unsubscribeUrl!.split('/').at(-1)!
+    await stopMail(house.ctx, token, 'all')
+    expect(await readMailStop(house.ctx, token)).toMatchObject({ isAllStopped: true, isTargetStopped: true })
+    expect(await house.database.reads.selectFrom('follow').selectAll().where('person_id', '=', pair.member.id).execute()).toEqual([])
+
+    await followTarget(pair.member.ctx, pair.target.id)
+    expect(await readMailStop(house.ctx, token)).toMatchObject({ isAllStopped: false, isTargetStopped: false })
+    const fit = await sendPairMeasures(pair, { from: 2024.4, count: 5, seed: 5, stepYr: 0.4 })
+    await publish(pair.coordinator.ctx, await rule(pair.coordinator.ctx, fit, 'accept', 'fits well'))
+    await runJobs(house.ctx, house.mailTransport)
+    expect(house.mail.filter(mail => mail.to === pair.member.email).map(mail => mail.subject)).toEqual([
+      'Linden 12 AB: edition 1 is published', 'Linden 12 AB: edition 2 is published',
+    ])
+
+    await stopMail(house.ctx, token, 'all')
+    expect(await readMailStop(house.ctx, token)).toMatchObject({ isAllStopped: true })
   })
 
   it('tell the same readers when the edition is withdrawn', async () => {
