@@ -1,5 +1,6 @@
 import { UPLOAD_CAP_BYTES } from '#shared/schemas/batches'
 import type { BatchView } from '#shared/schemas/batches'
+import { formatFileSize } from '#shared/units/file-size'
 import type { Kind } from '~~/fitting/types'
 import { ApiError, readTrouble } from './useApi'
 
@@ -23,7 +24,7 @@ export function checkSize(body: Blob): void {
     throw new ApiError({ code: 'file-unreadable', status: 422, title: 'The file is empty', detail: 'It has no bytes in it. Choose the file that holds your measures.', fields: [] })
   }
   if (body.size > UPLOAD_CAP_BYTES) {
-    const detail = `It has ${(body.size / 1048576).toFixed(1)} MB, and ${UPLOAD_CAP_BYTES / 1048576} MB are taken at once. Split it into parts; measures that come twice are not doubled.`
+    const detail = `It has ${formatFileSize(body.size)}, and ${formatFileSize(UPLOAD_CAP_BYTES)} are taken at once. Split it into parts; measures that come twice are not doubled.`
     throw new ApiError({ code: 'body-too-large', status: 413, title: 'The file is too large', detail, fields: [] })
   }
 }

@@ -1,6 +1,7 @@
 import type { FitResult, Refusal } from '../../fitting/types'
 import { ELEMENT_LABELS, elementFamily } from '../../shared/units/element-labels'
 import { joinWords } from '../../shared/units/list-text'
+import { formatNumber } from '../../shared/units/number-text'
 import { counted } from './wording'
 
 const SPOKEN_CHANGE_SIGMA = 2
@@ -18,7 +19,7 @@ function changeNote(result: FitResult, change: Record<string, number | null>): s
     .filter((entry): entry is [string, number] => entry[1] !== null && Math.abs(entry[1]) >= SPOKEN_CHANGE_SIGMA)
     .sort((a, b) => Math.abs(b[1]) - Math.abs(a[1]))
     .slice(0, 2)
-    .map(([name, sigma]) => `${spoken(name)} by ${Math.abs(sigma).toFixed(1)} σ`)
+    .map(([name, sigma]) => `${spoken(name)} by ${formatNumber(Math.abs(sigma), 1)} σ`)
   return moved.length ? `Against the edition in force ${joinWords(moved)} moved` : null
 }
 

@@ -1,4 +1,5 @@
 import type { FitResult } from '../../fitting/types'
+import { formatNumber } from '../../shared/units/number-text'
 
 export interface PublishingRules {
   leastMeasures: number
@@ -38,7 +39,7 @@ export function unmetRules(rules: PublishingRules, found: PublishingCase): strin
     unmet.push(`The programme asks for at least ${rules.leastObservers} observers; the measures used are by ${found.observersUsed}.`)
   }
   if (rules.leastArcTurns > 0 && (found.arcTurns === null || found.arcTurns < rules.leastArcTurns)) {
-    const covered = found.arcTurns === null ? 'how much these cover is not known' : `these cover ${found.arcTurns.toFixed(2)}`
+    const covered = found.arcTurns === null ? 'how much these cover is not known' : `these cover ${formatNumber(found.arcTurns, 2)}`
     unmet.push(`The programme asks for measures over at least ${rules.leastArcTurns} of a turn; ${covered}.`)
   }
   if (rules.needsSecondConsent && found.consents < 1) {

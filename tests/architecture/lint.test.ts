@@ -53,4 +53,12 @@ describe('the lint rule of the rooms', () => {
   it('keeps the environment in one place', async () => {
     expect((await complaintsAbout('server/domain/planted.ts', 'export const y = process.env.HOME')).join()).toContain('server/config/env.ts')
   })
+
+  it.each([
+    ['app/composables/planted.ts', 'export const y = (x: number) => x.toFixed(2)'],
+    ['server/domain/planted.ts', "export const y = (x: Date) => x.toLocaleDateString('en')"],
+    ['app/components/ui/UiPlanted.vue', '<script setup lang="ts">\nconst x = 1\n</script>\n<template><p>{{ x.toPrecision(3) }}</p></template>'],
+  ])('keeps formatting in one place: %s', async (path, text) => {
+    expect((await complaintsAbout(path, text)).join()).toContain('shared/units')
+  })
 })

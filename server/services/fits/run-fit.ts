@@ -1,5 +1,4 @@
-import type { FitOutcome } from '../../../fitting/types'
-import type { FitRequest, Progress } from '../../../fitting/types'
+import type { FitOutcome, FitRequest, Progress } from '../../../fitting/types'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
 import { isWaiting } from '../../domain/fit-state'

@@ -13,6 +13,6 @@ describe('before a file is sent', () => {
 
   it('a file of just the cap may go, and one byte more is refused with its size', () => {
     expect(() => checkSize(new Blob([new Uint8Array(UPLOAD_CAP_BYTES)]))).not.toThrow()
-    expect(() => checkSize(new Blob([new Uint8Array(UPLOAD_CAP_BYTES + 1)]))).toThrow('It has 8.0 MB, and 8 MB are taken at once')
+    expect(() => checkSize(new Blob([new Uint8Array(UPLOAD_CAP_BYTES + 1)]))).toThrow('It has 8.4 MB, and 8.4 MB are taken at once')
   })
 })
