@@ -33,6 +33,7 @@ export function useBatch(batchId: string) {
       const answer = await run(() => api.post<SendOutcome>(`${path}/send`, {}))
       if (!answer) return
       outcome.value = answer
+      said.value = ''
       await readAgain()
     }
 
