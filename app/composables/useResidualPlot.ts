@@ -3,7 +3,7 @@ import type { MarkShape, ObserverMark } from '#shared/drawing/observer-marks'
 import { axisRange, axisTicksFor, residualTicks } from '#shared/drawing/residual-sheet'
 import { halfHeight } from '#shared/drawing/residual-series'
 import type { ResidualChart, ResidualPoint, ResidualSeries } from '#shared/drawing/residual-series'
-import { formatSigned } from '#shared/units/number-text'
+import { formatDigits, formatNumber, formatSigned } from '#shared/units/number-text'
 import type { PlotColours } from './usePlotColours'
 
 const SYMBOLS: Record<MarkShape, string> = {
@@ -12,6 +12,7 @@ const SYMBOLS: Record<MarkShape, string> = {
 }
 /** A triangle or a diamond of the same nominal size looks smaller. */
 const SIZES_PX: Partial<Record<MarkShape, number>> = { triangle: 11, 'turned-triangle': 11, diamond: 10 }
+const NARROW_PX = 500
 const ROW_GAP = 0.14
 
 interface ResidualPlotInput {
@@ -49,7 +50,7 @@ function bandTraces({ band }: ResidualSeries, axes: Axes, colours: PlotColours):
   return [edge(-1, {}), edge(1, { fill: 'tonexty', fillcolor: colours.band })]
 }
 
-function marksTrace(series: ResidualSeries, axes: Axes, { lookOf, aside }: ResidualPlotInput, colours: PlotColours): PlotTrace {
+function marksTrace(series: ResidualSeries, axes: Axes, { lookOf, aside, widthPx }: ResidualPlotInput, colours: PlotColours): PlotTrace {
   const hues = [colours.o0, colours.o1, colours.o2, colours.o3, colours.o4]
   const looks = series.points.map(point => lookOf(point.id))
   const isAside = (point: ResidualPoint) => aside.has(point.id) || point.status !== 'used'
@@ -58,7 +59,7 @@ function marksTrace(series: ResidualSeries, axes: Axes, { lookOf, aside }: Resid
     x: series.points.map(point => point.at), y: series.points.map(point => point.value),
     customdata: series.points.map(point => point.id),
     marker: {
-      size: looks.map(look => SIZES_PX[look?.shape ?? 'circle'] ?? 8.5),
+      size: looks.map(look => (SIZES_PX[look?.shape ?? 'circle'] ?? 8.5) * (widthPx < NARROW_PX ? 0.8 : 1)),
       symbol: looks.map(look => SYMBOLS[look?.shape ?? 'circle']),
       color: looks.map(look => hues[look?.hue ?? 0]),
       line: { width: looks.map(look => (SYMBOLS[look?.shape ?? 'circle'].endsWith('open') ? 1.9 : 0)) },
@@ -70,9 +71,9 @@ function marksTrace(series: ResidualSeries, axes: Axes, { lookOf, aside }: Resid
 }
 
 function hoverText(point: ResidualPoint, unit: string, isAside: boolean): string {
-  const sign = point.value < 0 ? '−' : '+'
+  const sign = point.value > 0 ? '+' : ''
   const observer = point.observer.replaceAll('&', '&amp;').replaceAll('<', '&lt;')
-  return `${point.at.toFixed(3)} · ${observer}<br>${sign}${Math.abs(point.value).toPrecision(3)} ${unit}${isAside ? '<br>set aside' : ''}`
+  return `${formatNumber(point.at, 3)} · ${observer}<br>${sign}${formatDigits(point.value, 3)} ${unit}${isAside ? '<br>set aside' : ''}`
 }
 
 function ringTrace({ points }: ResidualSeries, axes: Axes, chosen: string | null, colours: PlotColours): PlotTrace {

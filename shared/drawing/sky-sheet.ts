@@ -1,16 +1,15 @@
 import type { FitResult, Prediction } from '../../fitting/types'
+import { formatEpoch } from '../units/angles'
 import { axisTicks } from './axis-ticks'
 import { conicOutline, type Point } from './conic-outline'
 import { frameAround, type DrawingFrame } from './drawing-frame'
+import { emptiestBox, labelPoints, placeLabel, type DrawnLabel } from './label-place'
 import { scaleBar, type ScaleBar } from './scale-bar'
 import { skyMeasures, skyNodes, skyPredictions } from './sky-geometry'
 import { pathData } from './thumbnail-svg'
 
 export const SKY_SHEET_PX = 560
 const MARGIN_PX = 60
-const EDGE_PX = 4
-/** A letter of a label at its largest, on a phone, in the sheet's own pixels. */
-const WIDEST_LETTER_PX = 9.6
 const LONGEST_BAR_PX = 190
 /** Predictions closer together on paper than this would print their years over each other. */
 const LEAST_LABEL_DISTANCE_PX = 34
@@ -23,10 +22,9 @@ export interface DrawnMeasure {
   status: 'used' | 'set-aside' | 'not-fitted'
 }
 
-export interface DrawnLabel {
-  text: string
+interface Labelled {
   at: Point
-  anchor: 'start' | 'middle' | 'end'
+  label: DrawnLabel
 }
 
 /** The sky drawing of a pair, every length in pixels of a square sheet; north is up and east at the left. */
@@ -36,13 +34,14 @@ export interface SkySheet {
   /** Path of the fitted curve, null where there is none to draw. */
   curve: string | null
   focus: Point
-  periastron: { at: Point; label: DrawnLabel } | null
+  periastron: Labelled | null
   apsides: [Point, Point] | null
   nodes: [Point, Point] | null
   measures: DrawnMeasure[]
-  predictions: { yearYr: number; at: Point; label: DrawnLabel }[]
-  bar: ScaleBar
-  pxPerArcsec: number
+  predictions: (Labelled & { yearYr: number })[]
+  bar: ScaleBar & { at: Point }
+  /** Where the arrows to north and east meet. */
+  compassAt: Point
 }
 
 /**
@@ -53,23 +52,23 @@ export interface SkySheet {
  */
 export function skySheet(result: FitResult, predictions: readonly Prediction[]): SkySheet {
   const outline = conicOutline(result)
-  const measures = skyMeasures(result)
-  const places = [...(outline?.points ?? []), ...measures.flatMap(({ observed }) => [observed]), { x: 0, y: 0 }]
+  const seen = skyMeasures(result)
+  const places = [...(outline?.points ?? []), ...seen.map(measure => measure.observed), { x: 0, y: 0 }]
   const frame = frameAround(places, { widthPx: SKY_SHEET_PX, heightPx: SKY_SHEET_PX, marginPx: MARGIN_PX, isEastLeft: true })
+  const focus = frame.toPx({ x: 0, y: 0 })
+  const obstacles = places.map(frame.toPx)
+  const labelled = labelsOf({ frame, focus, obstacles }, predictions, outline?.periapsis ?? null, result)
   const apsides = outline?.shape === 'closed' ? apsidesOf(outline.points) : null
   const nodes = skyNodes(result.elements)
-  const focus = frame.toPx({ x: 0, y: 0 })
+  const corner = freeCorners(obstacles)
   return {
-    ...gridOf(frame),
+    ...gridOf(frame), ...labelled, focus,
     curve: outline && pathData(outline, frame.toPx),
-    focus,
-    periastron: outline?.periapsis ? withLabel(frame.toPx(outline.periapsis), focus, 'periastron') : null,
     apsides: apsides && [frame.toPx(apsides[0]), frame.toPx(apsides[1])],
     nodes: nodes && [frame.toPx(nodes[0]), frame.toPx(nodes[1])],
-    measures: measures.map(({ id, observed, computed, status }) => ({ id, status, at: frame.toPx(observed), computedAt: frame.toPx(computed) })),
-    predictions: drawnPredictions(predictions, frame),
-    bar: scaleBar(frame.pxPerUnit, LONGEST_BAR_PX),
-    pxPerArcsec: frame.pxPerUnit,
+    measures: seen.map(({ id, observed, computed, status }) => ({ id, status, at: frame.toPx(observed), computedAt: frame.toPx(computed) })),
+    compassAt: corner.compassAt,
+    bar: barAt(scaleBar(frame.pxPerUnit, LONGEST_BAR_PX), corner.isBarAtRight),
   }
 }
 
@@ -87,29 +86,38 @@ function gridOf(frame: DrawingFrame): { gridX: number[]; gridY: number[] } {
   return { gridX: onPaper(origin.x), gridY: onPaper(origin.y) }
 }
 
-function drawnPredictions(predictions: readonly Prediction[], frame: DrawingFrame): SkySheet['predictions'] {
+interface Paper {
+  frame: DrawingFrame
+  focus: Point
+  obstacles: Point[]
+}
+
+/** Years first, then periastron; each keeps clear of those before it. */
+function labelsOf({ frame, focus, obstacles }: Paper, predictions: readonly Prediction[], periapsis: Point | null, result: FitResult): Pick<SkySheet, 'periastron' | 'predictions'> {
+  const taken = [...obstacles]
+  const withLabel = (at: Point, text: string): Labelled => {
+    const label = placeLabel(at, focus, text, { sizePx: SKY_SHEET_PX, obstacles: taken })
+    taken.push(...labelPoints(label))
+    return { at, label }
+  }
   const drawn: SkySheet['predictions'] = []
-  const focus = frame.toPx({ x: 0, y: 0 })
   for (const { yearYr, place } of skyPredictions(predictions)) {
     const at = frame.toPx(place)
     if (drawn.some(other => Math.hypot(other.at.x - at.x, other.at.y - at.y) < LEAST_LABEL_DISTANCE_PX)) continue
-    drawn.push({ yearYr, ...withLabel(at, focus, String(Math.round(yearYr * 100) / 100)) })
+    drawn.push({ yearYr, ...withLabel(at, String(Math.round(yearYr * 100) / 100)) })
   }
-  return drawn
+  const periastron = periapsis && withLabel(frame.toPx(periapsis), `periastron ${formatEpoch(result.elements.periastronTime?.value ?? null, 2)}`)
+  return { predictions: drawn, periastron }
 }
 
-/** A label on the side away from `inside`, kept on the paper. */
-function withLabel(at: Point, inside: Point, text: string): { at: Point; label: DrawnLabel } {
-  const away = Math.hypot(at.x - inside.x, at.y - inside.y) || 1
-  const [dx, dy] = [(at.x - inside.x) / away, (at.y - inside.y) / away]
-  const anchor = Math.abs(dx) < 0.35 ? 'middle' : dx > 0 ? 'start' : 'end'
-  const widthPx = text.length * WIDEST_LETTER_PX
-  const before = { start: 0, middle: widthPx / 2, end: widthPx }[anchor]
-  const x = within(at.x + dx * 15, EDGE_PX + before, SKY_SHEET_PX - EDGE_PX - (widthPx - before))
-  const y = within(at.y + dy * 20 + 4, 16, SKY_SHEET_PX - 8)
-  return { at, label: { text, at: { x, y }, anchor } }
+/** The compass takes the emptier upper corner, the scale bar the emptier lower one. */
+function freeCorners(obstacles: readonly Point[]): { compassAt: Point; isBarAtRight: boolean } {
+  const far = SKY_SHEET_PX
+  const isCompassAtLeft = emptiestBox([{ left: far - 110, right: far, top: 0, bottom: 100 }, { left: 0, right: 130, top: 0, bottom: 100 }], obstacles) === 1
+  const isBarAtRight = emptiestBox([{ left: 0, right: 230, top: far - 60, bottom: far }, { left: far - 230, right: far, top: far - 60, bottom: far }], obstacles) === 1
+  return { compassAt: { x: isCompassAtLeft ? 92 : far - 32, y: 78 }, isBarAtRight }
 }
 
-function within(value: number, least: number, greatest: number): number {
-  return Math.min(greatest, Math.max(least, value))
+function barAt(bar: ScaleBar, isAtRight: boolean): SkySheet['bar'] {
+  return { ...bar, at: { x: isAtRight ? SKY_SHEET_PX - 24 - bar.lengthPx : 24, y: 534 } }
 }
