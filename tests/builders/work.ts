@@ -1,4 +1,3 @@
-import { createHash } from 'node:crypto'
 import { fitOrbit } from '../../fitting'
 import type { Kind } from '../../fitting/types'
 import type { Context } from '../../server/context/context'
@@ -7,7 +6,6 @@ import { sendMailJob } from '../../server/jobs/definitions/send-mail.job'
 import { runJobsUntilIdle } from '../../server/jobs/runner/run-until-idle'
 import type { MailTransport } from '../../server/mail/outbox/mail-transport'
 import { sendBatch } from '../../server/services/batches/send-batch'
-import { uploadBatch } from '../../server/services/batches/upload-batch'
 import { ruleOnFit } from '../../server/services/desk/rule-on-fit'
 import { publishEdition } from '../../server/services/editions/publish-edition'
 import { readFit } from '../../server/services/fits/read-fit'
@@ -19,6 +17,7 @@ import type { EditionSummary } from '../../shared/schemas/editions'
 import type { Decision, FitView } from '../../shared/schemas/fits'
 import { createTargetSchema } from '../../shared/schemas/targets'
 import type { TargetView } from '../../shared/schemas/targets'
+import { uploadText } from './uploads'
 
 /** Steps of the group's work, each through the service that a page would call. `ctx` is the person who does it. */
 
@@ -27,8 +26,7 @@ export async function addTarget(ctx: Context, target: { programmeId: string, kin
 }
 
 export async function upload(ctx: Context, { text, fileName, target }: { text: string, fileName: string, target: { id: string, kind: Kind } }): Promise<BatchView> {
-  const bytes = Buffer.from(text, 'utf8')
-  return await uploadBatch(ctx, { fileName, kind: target.kind, targetId: target.id, bytes, sha256: createHash('sha256').update(bytes).digest('hex') })
+  return await uploadText(ctx, { text, fileName, kind: target.kind, targetId: target.id })
 }
 
 export async function uploadAndSend(ctx: Context, file: Parameters<typeof upload>[1]): Promise<SendOutcome & { batchId: string }> {
