@@ -97,8 +97,8 @@ test('a power cut during a fit is made up for at the next start: one fit, one re
   expect(query('SELECT state, result FROM fit')).toEqual([{ state: 'running', result: null }])
 
   await server.restart()
-  await until(async () => (await client.call('GET', `/api/v1/fits/${fitId}`)).json.state === 'done' || undefined)
   await until(() => job()[0]!.state === 'done' || undefined)
+  expect((await client.call('GET', `/api/v1/fits/${fitId}`)).json.state).toBe('done')
   expect(job()).toMatchObject([{ state: 'done', attempts: 2 }])
   expect(query('SELECT id, state FROM fit')).toEqual([{ id: fitId, state: 'done' }])
   expect(query(`SELECT subject_id FROM audit_event WHERE event = 'fit.done'`)).toEqual([{ subject_id: fitId }])
