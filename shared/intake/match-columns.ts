@@ -14,6 +14,9 @@ export interface MatchedColumns {
   notes: CellProblem[]
 }
 
+/** Wider tables are something else than measures. */
+const MOST_COLUMNS = 500
+
 /** What every file of a kind must have a column of, in words. */
 const NEEDED: Record<ReadableKind, { what: string; anyOf: readonly MeasureColumn[] }[]> = {
   relative: [
@@ -30,6 +33,7 @@ const NEEDED: Record<ReadableKind, { what: string; anyOf: readonly MeasureColumn
 export function matchColumns(table: Table, kind: ReadableKind): MatchedColumns {
   const inHeader = { rowNumber: table.headerRow }
   const nothing: MatchedColumns = { used: [], columns: [], unusedColumns: [], errors: [], notes: [] }
+  if (table.headings.length > MOST_COLUMNS) return { ...nothing, errors: [fileProblem(FILE_SENTENCES.tooManyColumns(table.headings.length, MOST_COLUMNS), inHeader)] }
   if (holdsNumbers(table.headings)) return { ...nothing, errors: [fileProblem(FILE_SENTENCES.headerMissing(), inHeader)] }
 
   const names = COLUMNS[kind].map(column => column.name)

@@ -15,12 +15,15 @@ const NUMBER = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:e[+-]?\d+)?$/i
 const WITH_DECIMAL_COMMA = /^[+-]?\d*,\d+(?:e[+-]?\d+)?$/i
 const COMMA_AND_DOT = /^[+-]?\d[\d.,]*$/
 const NO_NUMBER = /^(?:[+-]?(?:nan|inf|infinity)|n\/?a|null|none|-+|\?+)$/i
+/** No number that means anything is longer; looking for what was meant is worth it for short texts only. */
+const LONGEST_NUMBER = 60
 /** Beyond this the database refuses a value too. */
 const LARGEST = 1e300
 
 /** Reads the text of a cell as a number; the text is not empty. A comma among digits is a decimal comma only where the style says so. */
 export function readNumber(text: string, style: NumberStyle): ReadNumber {
   const written = text.trim().replace(/[−–]/g, '-')
+  if (written.length > LONGEST_NUMBER) return refuse(NUMBER_SENTENCES.notANumber())
   const dotted = WITH_DECIMAL_COMMA.test(written) ? written.replace(',', '.') : written
   if (dotted !== written && !style.allowsDecimalComma) return refuse(NUMBER_SENTENCES.decimalComma(dotted))
   if (!NUMBER.test(dotted)) return refuse(complaintAbout(dotted, style))

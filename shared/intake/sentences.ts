@@ -14,6 +14,7 @@ export const FILE_SENTENCES = {
   headerOnly: () => complain('There are column names, but no row below them.', 'Add one row a measure below the names.'),
   duplicateHeading: (name: string) => complain(`The column ${name} stands twice in the first row.`, 'Remove or rename one of the two; which to use cannot be guessed.'),
   columnMissing: (what: string, found: string) => complain(`No column says ${what}. Found: ${found}.`, `Name the column by one of the known names; ${what} is needed in every file.`),
+  tooManyColumns: (columns: number, cap: number) => complain(`The first row has ${columns} columns; ${cap} are read at most.`, 'Leave out the columns that hold nothing of the measures.'),
   tooManyRows: (rows: number, cap: number) => complain(`The file has ${rows} rows of measures; ${cap} are read at once.`, 'Split it into several files.'),
   kindComing: () => complain('Measures in right ascension and declination cannot be read yet: that is coming with the engine for comets and minor planets.', 'Keep the file; pairs (θ, ρ or east, north) and positions in the plane of an orbit (φ, r) can be sent now.'),
   columnNotUsed: (nearest: string | null) => complain('This column is not used.', nearest ? `Did you mean ${nearest}? Rename the column if so.` : 'Nothing needs doing if that is right.'),

@@ -65,6 +65,18 @@ describe('reading a file of pair measures', () => {
   })
 })
 
+describe('a cell as long as a book', () => {
+  it.each([
+    ['blanks inside a number', `1${' '.repeat(1_000_000)}x`],
+    ['digits', '1'.repeat(1_000_000)],
+    ['quotation marks', '""'.repeat(500_000)],
+  ])('is complained of like any other: %s', (_what, cell) => {
+    const { rows } = relative(`epoch,theta_deg,rho_arcsec\n2026.1,1,"${cell}"\n2026.2,2,1\n`)
+    expect(rows.map(row => row.parsed === null)).toEqual([true, false])
+    expect(rows[0]!.problems[0]!.value!.length).toBeLessThan(100)
+  })
+})
+
 describe('a file that cannot be read as measures', () => {
   const header = 'epoch,theta_deg,rho_arcsec\n'
   it.each([
@@ -79,6 +91,7 @@ describe('a file that cannot be read as measures', () => {
     ['mixed separators below it', 'epoch,theta_deg,rho_arcsec\n2026;1;1\n2027;2;1\n', 'different ways'],
     ['columns separated by blanks', 'epoch theta_deg rho_arcsec\n2026 1 1\n', 'single column'],
     ['a quotation mark without a partner', 'epoch,theta_deg,remarks\n2026,1,"open\n2027,1,x\n', 'row 2'],
+    ['more columns than are read at most', `epoch,theta_deg,rho_arcsec${',epoch'.repeat(100_000)}\n2026,1,1\n`, 'columns'],
     ['more rows than are read at once', header + '2026,1,1\n'.repeat(UPLOAD_CAP_ROWS + 1), 'are read at once'],
   ])('is refused with a reason and a remedy: %s', (_what, text, reason) => {
     const { fileProblems, rows } = relative(text)
