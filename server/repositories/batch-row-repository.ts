@@ -3,17 +3,13 @@ import type { Insertable, Selectable, Updateable } from 'kysely'
 import type { BatchRowTable } from '../db/schema'
 import { notFound } from '../errors/app-error'
 import type { Reads, Tx } from './connection'
+import { insertMany } from './insert-many'
 
 export type BatchRowRecord = Selectable<BatchRowTable> & { target_name: string | null }
 export type NewBatchRow = Insertable<BatchRowTable>
 
-/** A statement takes 32,766 values, and a row has nine. */
-const ROWS_A_STATEMENT = 1000
-
 export async function insertBatchRows(tx: Tx, rows: readonly NewBatchRow[]): Promise<void> {
-  for (let start = 0; start < rows.length; start += ROWS_A_STATEMENT) {
-    await tx.insertInto('batch_row').values(rows.slice(start, start + ROWS_A_STATEMENT)).execute()
-  }
+  await insertMany(tx, 'batch_row', rows)
 }
 
 export async function listBatchRows(reads: Reads, batchId: string): Promise<BatchRowRecord[]> {
@@ -42,6 +38,20 @@ export async function getBatchRow(reads: Reads, batchId: string, rowId: string):
 
 export async function updateBatchRow(tx: Tx, rowId: string, change: Updateable<BatchRowTable>): Promise<void> {
   await tx.updateTable('batch_row').set(change).where('id', '=', rowId).execute()
+}
+
+export interface RowDecision {
+  id: string
+  state: BatchRowTable['state']
+  target_id: string | null
+  problems: string
+}
+
+/** Writes what was decided on many rows at once. */
+export async function updateRowDecisions(tx: Tx, decisions: readonly RowDecision[]): Promise<void> {
+  if (decisions.length === 0) return
+  await sql`UPDATE batch_row SET state = d.value ->> 'state', target_id = d.value ->> 'target_id', problems = d.value ->> 'problems'
+    FROM json_each(${JSON.stringify(decisions)}) AS d WHERE batch_row.id = d.value ->> 'id'`.execute(tx)
 }
 
 export async function updateRowStates(tx: Tx, rowIds: readonly string[], state: BatchRowTable['state']): Promise<void> {

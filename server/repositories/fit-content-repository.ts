@@ -3,6 +3,7 @@ import type { Selectable } from 'kysely'
 import type { FitMeasureTable } from '../db/schema'
 import type { Reads, Tx } from './connection'
 import type { NewFitMeasure } from './fit-repository'
+import { insertMany } from './insert-many'
 
 export type FitMeasureRecord = Selectable<FitMeasureTable> & { decided_by_name: string | null }
 export interface FitBatchRecord {
@@ -15,13 +16,8 @@ export interface FitBatchRecord {
   state: string
 }
 
-/** A statement takes 32,766 values, and a row has six. */
-const ROWS_A_STATEMENT = 1000
-
 export async function insertFitMeasures(tx: Tx, rows: readonly NewFitMeasure[]): Promise<void> {
-  for (let start = 0; start < rows.length; start += ROWS_A_STATEMENT) {
-    await tx.insertInto('fit_measure').values(rows.slice(start, start + ROWS_A_STATEMENT)).execute()
-  }
+  await insertMany(tx, 'fit_measure', rows)
 }
 
 export async function insertFitParts(tx: Tx, fitId: string, partIds: readonly string[]): Promise<void> {

@@ -2,24 +2,17 @@ import { sql } from 'kysely'
 import type { Insertable, Selectable } from 'kysely'
 import type { MeasureTable } from '../db/schema'
 import type { Reads, Tx } from './connection'
+import { insertMany } from './insert-many'
 
 export type NewMeasure = Insertable<MeasureTable>
 export type MeasureRecord = Selectable<MeasureTable> & { observer_name: string; batch_number: number }
 
-/** A statement takes 32,766 values, and a measure has up to fifty-three. */
-const MEASURES_A_STATEMENT = 600
-const OBSERVERS_A_STATEMENT = 1000
-
 export async function insertMeasures(tx: Tx, measures: readonly NewMeasure[]): Promise<void> {
-  for (let start = 0; start < measures.length; start += MEASURES_A_STATEMENT) {
-    await tx.insertInto('measure').values(measures.slice(start, start + MEASURES_A_STATEMENT)).execute()
-  }
+  await insertMany(tx, 'measure', measures)
 }
 
 export async function insertMeasureObservers(tx: Tx, rows: readonly { measure_id: string; observer_id: string }[]): Promise<void> {
-  for (let start = 0; start < rows.length; start += OBSERVERS_A_STATEMENT) {
-    await tx.insertInto('measure_observer').values(rows.slice(start, start + OBSERVERS_A_STATEMENT)).execute()
-  }
+  await insertMany(tx, 'measure_observer', rows)
 }
 
 function measures(reads: Reads) {

@@ -7,8 +7,8 @@ import { measureKey, resolveRows, targetOf } from '../../domain/resolve-row'
 import type { DraftRow, KnownTarget, Resolution, Surroundings } from '../../domain/resolve-row'
 import { deleteDraftParts, insertParts, listPartsOfBatch } from '../../repositories/batch-part-repository'
 import type { BatchRecord } from '../../repositories/batch-repository'
-import { listBatchRows, updateBatchRow } from '../../repositories/batch-row-repository'
-import type { BatchRowRecord } from '../../repositories/batch-row-repository'
+import { listBatchRows, updateRowDecisions } from '../../repositories/batch-row-repository'
+import type { BatchRowRecord, RowDecision } from '../../repositories/batch-row-repository'
 import { listKnownDuplicateKeys } from '../../repositories/measure-repository'
 import { findTarget, mapTargetsByNameKey } from '../../repositories/target-repository'
 import { ownObserverName } from './own-observer'
@@ -75,13 +75,15 @@ export async function settleDraftRows(tx: Tx, ctx: Context, batch: BatchRecord):
   const rows = await listBatchRows(tx, batch.id)
   const drafts = rows.filter(row => row.state !== 'sent')
   const resolutions = await resolveDraftRows(tx, frameOf(batch), drafts.map(draftRowOf))
+  const changed: RowDecision[] = []
   for (const row of drafts) {
     const { state, targetId, problems } = resolutions.get(row.id)!
     const text = JSON.stringify({ read: keptProblems(row).read, resolved: problems } satisfies KeptProblems)
     if (row.state === state && row.target_id === targetId && row.problems === text) continue
     Object.assign(row, { state, target_id: targetId, problems: text })
-    await updateBatchRow(tx, row.id, { state, target_id: targetId, problems: text })
+    changed.push({ id: row.id, state, target_id: targetId, problems: text })
   }
+  await updateRowDecisions(tx, changed)
   await settleDraftParts(tx, ctx, { batchId: batch.id, targetIds: drafts.flatMap(row => row.target_id ?? []) })
   return rows
 }

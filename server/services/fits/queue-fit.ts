@@ -48,11 +48,11 @@ export interface QueuedFit {
  * to the new fit, so that one ruling settles them together.
  */
 export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<QueuedFit | null> {
-  const measures = await listStandingMeasures(tx, order.target.id)
+  const measures = (await listStandingMeasures(tx, order.target.id)).map(standingMeasure)
   if (measures.length === 0) return null
   const base = (await listFitsInStates(tx, order.target.id, SETTLED_FIT_STATES))[0] ?? null
   const setAside = order.setAside ?? (base ? await setAsidesOf(tx, base.id) : new Map<string, SetAside>())
-  const request = buildFitRequest(order.target, measures.map(standingMeasure), {
+  const request = buildFitRequest(order.target, measures, {
     setAside: new Set(setAside.keys()),
     model: order.model,
   })
@@ -108,7 +108,7 @@ async function setAsidesOf(tx: Tx, fitId: string): Promise<Map<string, SetAside>
 interface FitContent {
   fitId: string
   targetId: string
-  measures: readonly MeasureRecord[]
+  measures: readonly StandingMeasure[]
   setAside: ReadonlyMap<string, SetAside>
 }
 
@@ -119,7 +119,7 @@ async function linkContent(tx: Tx, { fitId, targetId, measures, setAside }: FitC
     return {
       fit_id: fitId,
       measure_id: measure.id,
-      role: fitRole(parsedRowOf(measure), decision !== undefined),
+      role: fitRole(measure.row, decision !== undefined),
       reason: decision?.reason ?? null,
       decided_by: decision?.decidedBy ?? null,
       is_new: accepted.has(measure.id) ? 0 : 1,
