@@ -1,8 +1,8 @@
 import type { Point } from './conic-outline'
 
-/** A label's place on a square sheet; the anchor is SVG's text-anchor. */
+/** A label's place on a square sheet: the baseline of its first line; the anchor is SVG's text-anchor. */
 export interface DrawnLabel {
-  text: string
+  lines: string[]
   at: Point
   anchor: 'start' | 'middle' | 'end'
 }
@@ -21,7 +21,7 @@ interface Paper {
 }
 
 const GAP_PX = 11
-const HEIGHT_PX = 15
+export const LINE_PX = 15
 const EDGE_PX = 4
 /** A letter at its usual size, and at its largest (on a phone, in the sheet's own pixels). */
 const LETTER_PX = 7.2
@@ -33,26 +33,28 @@ const INWARD_COST = 3
  * Finds a free place for a label beside a point.
  * @param at the point, px.
  * @param inside toward where labels should rather not lie, px.
- * @param text of the label.
+ * @param lines of the label, one or more.
  * @param paper its size and what stands on it.
  * @returns the candidate that covers least; of equal ones the one away from `inside`.
  */
-export function placeLabel(at: Point, inside: Point, text: string, paper: Paper): DrawnLabel {
-  const candidates = aroundPoint(at, text).map(label => ({ label, cost: costOf(label, at, inside, paper) }))
+export function placeLabel(at: Point, inside: Point, lines: string[], paper: Paper): DrawnLabel {
+  const candidates = aroundPoint(at, lines).map(label => ({ label, cost: costOf(label, at, inside, paper) }))
   return candidates.reduce((best, one) => (one.cost < best.cost ? one : best)).label
 }
 
-function aroundPoint({ x, y }: Point, text: string): DrawnLabel[] {
+function aroundPoint({ x, y }: Point, lines: string[]): DrawnLabel[] {
   const near = GAP_PX * 0.8
+  const more = (lines.length - 1) * LINE_PX
+  const candidate = (anchor: DrawnLabel['anchor'], atX: number, atY: number): DrawnLabel => ({ lines, anchor, at: { x: atX, y: atY } })
   return [
-    { text, anchor: 'end', at: { x: x - GAP_PX, y: y + 4 } },
-    { text, anchor: 'start', at: { x: x + GAP_PX, y: y + 4 } },
-    { text, anchor: 'middle', at: { x, y: y - GAP_PX } },
-    { text, anchor: 'middle', at: { x, y: y + GAP_PX + 10 } },
-    { text, anchor: 'end', at: { x: x - near, y: y - near } },
-    { text, anchor: 'start', at: { x: x + near, y: y - near } },
-    { text, anchor: 'end', at: { x: x - near, y: y + near + 10 } },
-    { text, anchor: 'start', at: { x: x + near, y: y + near + 10 } },
+    candidate('end', x - GAP_PX, y + 4 - more / 2),
+    candidate('start', x + GAP_PX, y + 4 - more / 2),
+    candidate('middle', x, y - GAP_PX - more),
+    candidate('middle', x, y + GAP_PX + 10),
+    candidate('end', x - near, y - near - more),
+    candidate('start', x + near, y - near - more),
+    candidate('end', x - near, y + near + 10),
+    candidate('start', x + near, y + near + 10),
   ]
 }
 
@@ -68,10 +70,10 @@ function costOf(label: DrawnLabel, at: Point, inside: Point, { sizePx, obstacles
 }
 
 /** The room that a label takes at a size of letter. */
-export function boxOf({ text, at, anchor }: DrawnLabel, letterPx = LETTER_PX): Box {
-  const width = text.length * letterPx
+export function boxOf({ lines, at, anchor }: DrawnLabel, letterPx = LETTER_PX): Box {
+  const width = Math.max(...lines.map(line => line.length)) * letterPx
   const left = at.x - { start: 0, middle: width / 2, end: width }[anchor]
-  return { left, right: left + width, top: at.y - HEIGHT_PX + 3, bottom: at.y + 3 }
+  return { left, right: left + width, top: at.y - LINE_PX + 3, bottom: at.y + (lines.length - 1) * LINE_PX + 3 }
 }
 
 /** How many points lie in a box. */

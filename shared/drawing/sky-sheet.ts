@@ -10,6 +10,7 @@ import { pathData } from './thumbnail-svg'
 
 export const SKY_SHEET_PX = 560
 const MARGIN_PX = 60
+const EDGE_PX = 12
 const LONGEST_BAR_PX = 190
 /** Predictions closer together on paper than this would print their years over each other. */
 const LEAST_LABEL_DISTANCE_PX = 34
@@ -95,19 +96,23 @@ interface Paper {
 /** Years first, then periastron; each keeps clear of those before it. */
 function labelsOf({ frame, focus, obstacles }: Paper, predictions: readonly Prediction[], periapsis: Point | null, result: FitResult): Pick<SkySheet, 'periastron' | 'predictions'> {
   const taken = [...obstacles]
-  const withLabel = (at: Point, text: string): Labelled => {
-    const label = placeLabel(at, focus, text, { sizePx: SKY_SHEET_PX, obstacles: taken })
+  const withLabel = (at: Point, lines: string[]): Labelled => {
+    const label = placeLabel(at, focus, lines, { sizePx: SKY_SHEET_PX, obstacles: taken })
     taken.push(...labelPoints(label))
     return { at, label }
   }
   const drawn: SkySheet['predictions'] = []
   for (const { yearYr, place } of skyPredictions(predictions)) {
     const at = frame.toPx(place)
-    if (drawn.some(other => Math.hypot(other.at.x - at.x, other.at.y - at.y) < LEAST_LABEL_DISTANCE_PX)) continue
-    drawn.push({ yearYr, ...withLabel(at, String(Math.round(yearYr * 100) / 100)) })
+    if (!isOnPaper(at) || drawn.some(other => Math.hypot(other.at.x - at.x, other.at.y - at.y) < LEAST_LABEL_DISTANCE_PX)) continue
+    drawn.push({ yearYr, ...withLabel(at, [String(Math.round(yearYr * 100) / 100)]) })
   }
-  const periastron = periapsis && withLabel(frame.toPx(periapsis), `periastron ${formatEpoch(result.elements.periastronTime?.value ?? null, 2)}`)
+  const periastron = periapsis && withLabel(frame.toPx(periapsis), ['periastron', formatEpoch(result.elements.periastronTime?.value ?? null, 2)])
   return { predictions: drawn, periastron }
+}
+
+function isOnPaper({ x, y }: Point): boolean {
+  return Math.min(x, y) > EDGE_PX && Math.max(x, y) < SKY_SHEET_PX - EDGE_PX
 }
 
 /** The compass takes the emptier upper corner, the scale bar the emptier lower one. */
