@@ -3,6 +3,7 @@ import { UPLOAD_CAP_ROWS, type CellProblem } from '../schemas/batches'
 import { isReadableKind, type ReadableKind } from './columns'
 import { decodeText } from './decode-text'
 import { delimiterWord, delimitersIn, type Delimiter } from './delimiter'
+import { gatherNotes } from './gather-notes'
 import { markDuplicates } from './mark-duplicates'
 import { matchColumns, type MatchedColumns } from './match-columns'
 import type { ParsedRow, RowCells } from './parsed-row'
@@ -64,7 +65,8 @@ export function readMeasures(input: Uint8Array | string, options: ReadOptions): 
   if (errors.length > 0) return refuse(...errors, ...matched.notes, ...notes)
 
   const rows = table.records.map(record => readRecord(record, { table, matched, kind, now: options.now }))
-  return { reading, fileProblems: [...notes, ...matched.notes], rows: markDuplicates(rows) }
+  const gathered = gatherNotes(markDuplicates(rows))
+  return { reading, fileProblems: [...notes, ...matched.notes, ...gathered.fileNotes], rows: gathered.rows }
 }
 
 function amountErrors(table: Table): CellProblem[] {

@@ -17,6 +17,7 @@ export const FILE_SENTENCES = {
   tooManyColumns: (columns: number, cap: number) => complain(`The first row has ${columns} columns; ${cap} are read at most.`, 'Leave out the columns that hold nothing of the measures.'),
   tooManyRows: (rows: number, cap: number) => complain(`The file has ${rows} rows of measures; ${cap} are read at once.`, 'Split it into several files.'),
   kindComing: () => complain('Measures in right ascension and declination cannot be read yet: that is coming with the engine for comets and minor planets.', 'Keep the file; pairs (θ, ρ or east, north) and positions in the plane of an orbit (φ, r) can be sent now.'),
+  inManyRows: (note: Complaint, rows: number) => complain(`In ${rows} rows: ${note.reason}`, note.remedy),
   columnNotUsed: (nearest: string | null) => complain('This column is not used.', nearest ? `Did you mean ${nearest}? Rename the column if so.` : 'Nothing needs doing if that is right.'),
   columnOfOtherKind: (kind: string) => complain(`This column is not used: it belongs to measures of the kind ${kind}.`, 'Choose the other kind if that is what the file holds.'),
 } as const

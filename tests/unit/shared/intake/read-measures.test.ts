@@ -49,6 +49,14 @@ describe('reading a file of pair measures', () => {
     expect(rows[1]!.problems).toMatchObject([{ severity: 'note', reason: expect.stringContaining('row 2') }])
   })
 
+  it('says once for the file what most of its rows share, and keeps the other notes with their rows', () => {
+    const both = Array.from({ length: 9 }, (_, i) => `2026.${i},90,0.5,0.5,0\n`).join('')
+    const { rows, fileProblems } = relative(`epoch,theta_deg,rho_arcsec,east_arcsec,north_arcsec\n${both}2026.95,360,1,,\n`)
+    expect(fileProblems).toMatchObject([{ severity: 'note', column: 'theta_deg', reason: expect.stringMatching(/^In 9 rows: θ, ρ and east, north say the same position/) }])
+    expect(rows.map(row => row.problems.length)).toEqual([0, 0, 0, 0, 0, 0, 0, 0, 0, 1])
+    expect(rows.every(row => row.parsed !== null)).toBe(true)
+  })
+
   it('says where rows are longer or shorter than the row of names', () => {
     const { rows } = relative('epoch,theta_deg,rho_arcsec,remarks\n2026.1,1,1,a,b\n2026.2,1,1\n2026.3,1,1,,,\n')
     expect(rows[0]).toMatchObject({ parsed: null, problems: [{ severity: 'error', value: 'b' }] })
