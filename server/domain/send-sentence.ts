@@ -18,5 +18,7 @@ export function sendSentence({ sent, alreadyHere, keptAsDraft }: SendCounts): st
 export function nothingNewSentence({ alreadyHere, keptAsDraft }: SendCounts): string {
   const here = `0 new, ${alreadyHere} already here.`
   if (!keptAsDraft) return `${here} The same measures add nothing; send a file that holds something new.`
-  return `${here} ${counted(keptAsDraft, 'row')} cannot be sent as they stand: mend them, or choose their target, and send again.`
+  return keptAsDraft === 1
+    ? `${here} One row cannot be sent as it stands: mend it, or choose its target, and send again.`
+    : `${here} ${keptAsDraft} rows cannot be sent as they stand: mend them, or choose their target, and send again.`
 }
