@@ -1,8 +1,10 @@
 /** The relative orbit from request to result: errors, search or refit, solution, judgement. */
 import { keplerPath, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
-import { prepareSkyMeasures, rescaleSkyMeasures, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
-import { searchRelative } from '../search/blind-search'
+import { effectiveRows, prepareSkyMeasures, rescaleSkyMeasures, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
+import { searchRelative, type SearchRequest } from '../search/blind-search'
+import { searchRobustly } from '../search/robust-search'
 import { settleStarts, type SettledPath } from '../search/settle-path'
+import { settleRobustly, type RobustlySettled } from '../search/settle-robustly'
 import type { FitResult, FitSettings, FitStart, RelativeMeasure } from '../types'
 import { fitMotion } from './fit-motion'
 import { judgeRelative } from './judge-relative'
@@ -28,8 +30,13 @@ export interface RelativeRequest {
   report: Report
 }
 
+interface Middle {
+  referenceEpochYr: number
+  spanYr: number
+}
+
 /** Epoch about which phases and motions are least correlated: the middle of the arc. */
-function middleOf(measures: SkyMeasures): { referenceEpochYr: number; spanYr: number } {
+function middleOf(measures: SkyMeasures): Middle {
   const first = measures.used[0]!.epochYr
   const last = measures.used[measures.used.length - 1]!.epochYr
   return { referenceEpochYr: (first + last) / 2, spanYr: last - first }
@@ -53,23 +60,36 @@ function checkEnough(measures: SkyMeasures): void {
   if (!used.some((measure) => measure.form !== 'rho')) refuse('too-few-measures', 'No used measure has a position angle: the orientation of the orbit is open.', 'Add position angles.')
 }
 
-function startsOf(request: RelativeRequest, measures: SkyMeasures, referenceEpochYr: number, spanYr: number): ArrayLike<number>[] {
-  const { start, settings, report } = request
-  if (start) return [start.state.values]
-  const degrees = Math.max(1, 2 * measures.used.length - RELATIVE_KEPLER_NAMES.length)
-  const minima = searchRelative({
-    measures: measures.used, referenceEpochYr, spanYr,
-    shortestPeriodYr: settings.shortestPeriodYr ?? DEFAULT_SHORTEST_PERIOD_YR,
+function searchRequest(request: RelativeRequest, measures: SkyMeasures, middle: Middle): SearchRequest {
+  const degrees = Math.max(1, effectiveRows(measures.used) - RELATIVE_KEPLER_NAMES.length)
+  return {
+    measures: measures.used, ...middle,
+    shortestPeriodYr: request.settings.shortestPeriodYr ?? DEFAULT_SHORTEST_PERIOD_YR,
     keepWithin: (best) => SEARCH_MARGIN * (best + ALTERNATIVE_WITHIN * Math.max(1, best / degrees)),
-    onProgress: (part) => report('searching', part),
-  })
+    onProgress: (part) => request.report('searching', part),
+  }
+}
+
+function startsOf(request: RelativeRequest, measures: SkyMeasures, middle: Middle): ArrayLike<number>[] {
+  if (request.start) return [request.start.state.values]
+  const search = searchRequest(request, measures, middle)
+  const minima = isRobust(request) ? searchRobustly(search, request.settings.seed ?? 1) : searchRelative(search)
   return minima.slice(0, ALTERNATIVES_AT_MOST + 1).map((minimum) => minimum.values)
+}
+
+const isRobust = (request: RelativeRequest) => request.settings.loss === 'biweight'
+
+/** Solutions of all starts, best first, with the weights of a robust loss in the measures. */
+function settleAll(request: RelativeRequest, measures: SkyMeasures, starts: ArrayLike<number>[], referenceEpochYr: number): RobustlySettled {
+  const path = keplerPath(referenceEpochYr)
+  if (isRobust(request) && starts.length > 0) return settleRobustly(path, measures, starts)
+  return { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
 }
 
 /** Equal errors take the size that the residuals show; noise-free residuals leave them as they are. */
 function withEstimatedErrors(measures: SkyMeasures, best: SettledPath): SkyMeasures {
-  const { chiSquare, residuals, values } = best.solution
-  const degrees = residuals.length - values.length
+  const { chiSquare, values } = best.solution
+  const degrees = effectiveRows(measures.used) - values.length
   const factor = degrees > 0 ? Math.sqrt(chiSquare / degrees) : 0
   return measures.basis === 'scaled' && factor > 1e-9 ? rescaleSkyMeasures(measures, factor) : measures
 }
@@ -88,12 +108,12 @@ export function fitRelative(request: RelativeRequest): FitResult {
   checkEnough(prepared)
   const middle = middleOf(prepared)
   const referenceEpochYr = request.start?.state.referenceEpochYr ?? middle.referenceEpochYr
-  const starts = startsOf(request, prepared, referenceEpochYr, middle.spanYr)
-  const provisional = settleStarts(keplerPath(referenceEpochYr), prepared.used, starts, (part) => request.report('polishing', part))
-  if (provisional.length === 0) refuse('no-orbit-found', 'The search found no orbit for these measures.', 'Look for changed quadrants and mistyped epochs, or fit a straight line.')
-  const measures = withEstimatedErrors(prepared, provisional[0]!)
-  const solutions = measures === prepared ? provisional
-    : settleStarts(keplerPath(referenceEpochYr), measures.used, provisional.map((settled) => settled.solution.values), () => undefined)
+  const starts = startsOf(request, prepared, middle)
+  const provisional = settleAll(request, prepared, starts, referenceEpochYr)
+  if (provisional.solutions.length === 0) refuse('no-orbit-found', 'The search found no orbit for these measures.', 'Look for changed quadrants and mistyped epochs, or fit a straight line.')
+  const estimated = withEstimatedErrors(provisional.measures, provisional.solutions[0]!)
+  const { measures, solutions } = estimated === provisional.measures ? provisional
+    : settleAll(request, estimated, provisional.solutions.map((settled) => settled.solution.values), referenceEpochYr)
   const result = judgeRelative({ solutions, measures, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
   request.report('judging', 1)
   return result

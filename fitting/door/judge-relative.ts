@@ -1,6 +1,6 @@
 /** From the solutions of a relative fit to its result: elements, errors, residuals, alternatives, warnings. */
 import { keplerPath, LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
-import type { SkyMeasures } from '../models/sky-measure'
+import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
 import type { SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
@@ -9,6 +9,7 @@ import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
 import { carryBackOf, combinedAngle, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
+import { proposalsOf } from '../uncertainty/proposals'
 import { relativeWarnings } from '../uncertainty/relative-warnings'
 import { skyResidual } from '../uncertainty/sky-residuals'
 import { straightnessOf } from '../uncertainty/straightness'
@@ -40,7 +41,7 @@ export function publishedCovariance(matrix: number[][] | null, published: number
 function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { conditionNumber: number } {
   const { jacobian, residuals, values, chiSquare } = settled.solution
   const { matrix, conditionNumber } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
-  return { covariance: matrix, conditionNumber, scale: errorScale(measures.basis, chiSquare, residuals.length - values.length) }
+  return { covariance: matrix, conditionNumber, scale: errorScale(measures.basis, chiSquare, effectiveRows(measures.used) - values.length) }
 }
 
 function publishedElements(elements: RelativeElements, errors: Errors): Record<string, Element> {
@@ -83,8 +84,8 @@ function alternativesOf(judgement: Judgement, scaleSquared: number, lastEpochYr:
 function statisticsOf(judgement: Judgement, errors: { conditionNumber: number }, elements: RelativeElements): Omit<FitStatistics, 'rms' | 'byObserver'> {
   const { measures, solutions } = judgement
   const { chiSquare, residuals, values } = solutions[0]!.solution
-  const degreesOfFreedom = residuals.length - values.length
   const { used } = measures
+  const degreesOfFreedom = Math.max(0, effectiveRows(used) - values.length)
   return {
     measures: measures.all.length,
     used: used.length,
@@ -142,7 +143,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     statistics,
     residuals,
     alternatives,
-    proposals: [],
+    proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, { path: keplerPath(referenceEpochYr), values: solution.values }) : [],
     warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
     state: {
       model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),

@@ -6,13 +6,13 @@ const LATER = 'Leave the setting out, or give its default.'
 
 /** Settings of which only the default is served so far, with that default. */
 const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
-  loss: 'squares', conicClass: 'any', forces: 'sun', normalPoints: false, thetaEquinox: 2000,
+  conicClass: 'any', forces: 'sun', normalPoints: false, thetaEquinox: 2000,
 }
 
 /** Settings that have a meaning, by kind. */
 const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
-  relative: ['model', 'weights', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
-  plane: ['model', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  relative: ['model', 'loss', 'weights', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  plane: ['model', 'loss', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   equatorial: [],
 }
 
@@ -29,6 +29,11 @@ const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
 /** Served models and weights of this engine version. */
 const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: [] }
 const WEIGHTS: readonly string[] = ['stated', 'equal']
+
+/** The biweight is served for orbits of double stars only. */
+function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
+  return loss === undefined || loss === 'squares' || (loss === 'biweight' && kind === 'relative' && (model ?? 'kepler') === 'kepler')
+}
 
 function checkValue(name: keyof FitSettings, value: unknown): void {
   const choices = CHOICES[name]
@@ -62,6 +67,9 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
   }
   if (settings.model !== undefined && !MODELS[kind].includes(settings.model)) {
     refuse('setting-not-available', `The model ${settings.model} is not available for ${kind} fits.`, LATER)
+  }
+  if (!isLossServed(kind, settings)) {
+    refuse('setting-not-available', `The loss ${settings.loss} is not available for this fit.`, 'Leave it out for least squares; biweight is available for orbits of double stars.')
   }
   if (settings.weights !== undefined && !WEIGHTS.includes(settings.weights)) {
     refuse('setting-not-available', `The weights ${settings.weights} are not available in this version of the engine.`, LATER)

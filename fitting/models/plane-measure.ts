@@ -4,7 +4,8 @@
  * Errors as for the sky: stated (formal), all alike in relative terms of r (scaled), or the missing at the median relative error (mixed).
  */
 import type { FitSettings, PlaneMeasure } from '../types'
-import { compareMeasures, median, type ErrorBasis } from './sky-measure'
+import { median } from '../solve/median'
+import { compareMeasures, type ErrorBasis } from './sky-measure'
 
 /** One measure with its error. */
 export interface PlanePoint {

@@ -4,6 +4,7 @@
  * arcsec, the same along and across (scaled); in a mixture the missing take the median stated (mixed).
  */
 import { atan2, hypot } from '../elementary'
+import { median } from '../solve/median'
 import type { FitSettings, FitStatistics, RelativeMeasure } from '../types'
 
 /** One measure with its errors; positions in arcsec, x = north, y = east. */
@@ -24,7 +25,10 @@ export interface SkyMeasure {
   sigmaNorth: number
   sigmaEast: number
   correlation: number
+  /** Factor on 1/σ² that the request gives. */
   weight: number
+  /** Factor on 1/σ² that a robust loss gives, 1 otherwise. */
+  robustWeight: number
 }
 
 export type ErrorBasis = FitStatistics['errorBasis']
@@ -59,18 +63,6 @@ export function compareMeasures(
     || compareText(a.station ?? '', b.station ?? '') || compareText(a.id, b.id)
 }
 
-/**
- * Median of finite numbers.
- * @param values at least one finite number.
- * @returns the middle value, or the mean of the two middle ones; NaN for none.
- */
-export function median(values: readonly number[]): number {
-  const sorted = [...values].sort((a, b) => a - b)
-  const middle = Math.floor(sorted.length / 2)
-  if (sorted.length === 0) return NaN
-  return sorted.length % 2 === 1 ? sorted[middle]! : (sorted[middle - 1]! + sorted[middle]!) / 2
-}
-
 function statusOf(measure: RelativeMeasure): SkyMeasure['status'] {
   if (measure.position.form === 'limit') return 'not-fitted'
   return measure.setAside === true ? 'set-aside' : 'used'
@@ -82,7 +74,7 @@ function withStatedErrors(measure: RelativeMeasure): SkyMeasure {
   const base = {
     id: measure.id, observer: measure.observer, epochYr: measure.epochYr, status: statusOf(measure), isAmbiguous: false,
     thetaRad: NaN, rhoArcsec: NaN, north: NaN, east: NaN, sigmaAlong: NaN, sigmaThetaRad: NaN, sigmaNorth: NaN, sigmaEast: NaN,
-    correlation: 0, weight: measure.weightFactor ?? 1,
+    correlation: 0, weight: measure.weightFactor ?? 1, robustWeight: 1,
   }
   if (position.form === 'limit') return { ...base, form: 'limit', rhoArcsec: position.rhoLimitArcsec }
   if (position.form === 'rectangular') {
@@ -177,4 +169,25 @@ export function prepareSkyMeasures(measures: readonly RelativeMeasure[], setting
 export function rescaleSkyMeasures(measures: SkyMeasures, factor: number): SkyMeasures {
   const all = measures.all.map((m) => scaleErrors(m, factor))
   return { ...measures, all, used: all.filter((m) => m.status === 'used') }
+}
+
+/**
+ * Gives every used measure its robust weight.
+ * @param measures as prepared.
+ * @param weights one a used measure, above 0 and up to 1.
+ * @returns the same measures with these weights; measures that are not used keep 1.
+ */
+export function withRobustWeights(measures: SkyMeasures, weights: ArrayLike<number>): SkyMeasures {
+  const used = measures.used.map((measure, i) => ({ ...measure, robustWeight: weights[i]! }))
+  let next = 0
+  return { ...measures, used, all: measures.all.map((measure) => (measure.status === 'used' ? used[next++]! : measure)) }
+}
+
+/**
+ * Rows that the used measures give, each counted by its robust weight.
+ * @param used used measures.
+ * @returns a whole number.
+ */
+export function effectiveRows(used: readonly SkyMeasure[]): number {
+  return Math.round(used.reduce((sum, measure) => sum + (measure.form === 'theta' || measure.form === 'rho' ? 1 : 2) * measure.robustWeight, 0))
 }

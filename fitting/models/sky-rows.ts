@@ -20,6 +20,8 @@ function whitening(a: number, b: number, correlation: number, weight: number): [
   return [root / a, (-root * correlation) / (a * rest), root / (b * rest)]
 }
 
+const weightOf = (measure: SkyMeasure) => measure.weight * measure.robustWeight
+
 type Form = 'pair' | 'wrapped' | 'theta' | 'rho'
 
 /** One measure ready to give its rows. */
@@ -37,9 +39,9 @@ export interface SkyRow {
 }
 
 function polarPair(measure: SkyMeasure, weighRhoArcsec: number): SkyRow {
-  const { thetaRad, rhoArcsec, sigmaAlong, sigmaThetaRad, correlation, weight } = measure
+  const { thetaRad, rhoArcsec, sigmaAlong, sigmaThetaRad, correlation } = measure
   const floor = Math.max(weighRhoArcsec, sigmaAlong)
-  const [l11, l21, l22] = whitening(sigmaAlong, floor * sigmaThetaRad, correlation, weight)
+  const [l11, l21, l22] = whitening(sigmaAlong, floor * sigmaThetaRad, correlation, weightOf(measure))
   const c = cos(thetaRad)
   const s = sin(thetaRad)
   return {
@@ -51,7 +53,7 @@ function polarPair(measure: SkyMeasure, weighRhoArcsec: number): SkyRow {
 
 function single(measure: SkyMeasure, form: 'theta' | 'rho'): SkyRow {
   const sigma = form === 'theta' ? measure.sigmaThetaRad : measure.sigmaAlong
-  return { measure, form, rows: 1, w11: Math.sqrt(measure.weight) / sigma, w12: 0, w21: 0, w22: 0, xo: 0, yo: 0 }
+  return { measure, form, rows: 1, w11: Math.sqrt(weightOf(measure)) / sigma, w12: 0, w21: 0, w22: 0, xo: 0, yo: 0 }
 }
 
 /**
@@ -63,11 +65,11 @@ function single(measure: SkyMeasure, form: 'theta' | 'rho'): SkyRow {
 export function skyRow(measure: SkyMeasure, weighRhoArcsec: number): SkyRow {
   if (measure.form === 'theta' || measure.form === 'rho') return single(measure, measure.form)
   if (measure.form === 'rectangular') {
-    const [l11, l21, l22] = whitening(measure.sigmaNorth, measure.sigmaEast, measure.correlation, measure.weight)
+    const [l11, l21, l22] = whitening(measure.sigmaNorth, measure.sigmaEast, measure.correlation, weightOf(measure))
     return { measure, form: 'pair', rows: 2, w11: l11, w12: 0, w21: l21, w22: l22, xo: measure.north, yo: measure.east }
   }
   if (measure.sigmaThetaRad <= LARGEST_LINEAR_SIGMA_RAD) return polarPair(measure, weighRhoArcsec)
-  const [l11, l21, l22] = whitening(measure.sigmaAlong, measure.sigmaThetaRad, measure.correlation, measure.weight)
+  const [l11, l21, l22] = whitening(measure.sigmaAlong, measure.sigmaThetaRad, measure.correlation, weightOf(measure))
   return { measure, form: 'wrapped', rows: 2, w11: l11, w12: 0, w21: l21, w22: l22, xo: 0, yo: 0 }
 }
 
@@ -81,7 +83,7 @@ export function skyRow(measure: SkyMeasure, weighRhoArcsec: number): SkyRow {
 export function linearSkyRow(measure: SkyMeasure, rhoArcsec: number): SkyRow {
   if (measure.form === 'polar') return polarPair(measure, rhoArcsec)
   if (measure.form !== 'theta') return skyRow(measure, rhoArcsec)
-  const scale = Math.sqrt(measure.weight) / (rhoArcsec * measure.sigmaThetaRad)
+  const scale = Math.sqrt(weightOf(measure)) / (rhoArcsec * measure.sigmaThetaRad)
   return {
     measure, form: 'pair', rows: 1, w11: -sin(measure.thetaRad) * scale, w12: cos(measure.thetaRad) * scale, w21: 0, w22: 0, xo: 0, yo: 0,
   }

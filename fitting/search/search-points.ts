@@ -18,8 +18,11 @@ export interface SearchPoints {
   /** v = M o. */
   v1: Float64Array
   v2: Float64Array
-  /** Σ oᵀ M o: χ² of a companion at the primary. */
+  /** oᵀ M o of each, and their sum: χ² of a companion at the primary. */
+  own: Float64Array
   constant: number
+  /** 1 for a measure of two rows, 0 for a position angle alone. */
+  isPair: Uint8Array
 }
 
 /** ρ nearest in time among the measures that have one; measures are sorted by epoch. */
@@ -59,7 +62,8 @@ export function searchPoints(measures: readonly SkyMeasure[], signs: Int8Array):
   const kept = measures.map((measure, i) => ({ measure, sign: signs[i]!, i })).filter(({ measure }) => measure.form !== 'rho')
   const array = () => new Float64Array(kept.length)
   const points: SearchPoints = {
-    count: kept.length, epochsYr: array(), m11: array(), m12: array(), m22: array(), v1: array(), v2: array(), constant: 0,
+    count: kept.length, epochsYr: array(), m11: array(), m12: array(), m22: array(), v1: array(), v2: array(), own: array(), constant: 0,
+    isPair: Uint8Array.from(kept, ({ measure }) => (measure.form === 'theta' ? 0 : 1)),
   }
   kept.forEach(({ measure, sign, i }, at) => {
     const rho = measure.rhoArcsec > 0 ? measure.rhoArcsec : nearestRho(measures, i)
@@ -75,7 +79,8 @@ export function searchPoints(measures: readonly SkyMeasure[], signs: Int8Array):
     points.m22[at] = m22
     points.v1[at] = m11 * x + m12 * y
     points.v2[at] = m12 * x + m22 * y
-    points.constant += x * points.v1[at]! + y * points.v2[at]!
+    points.own[at] = x * points.v1[at]! + y * points.v2[at]!
+    points.constant += points.own[at]!
   })
   return points
 }

@@ -79,13 +79,14 @@ export function skyResidual(measure: SkyMeasure, context: SkyResidualContext): R
   const east = position[1]!
   const computed: Place = { north, east, thetaRad: atan2(east, north), rho: hypot(north, east) }
   const isFitted = measure.form !== 'limit'
-  const row = isFitted ? skyRow(measure, computed.rho) : null
+  const row = isFitted ? skyRow({ ...measure, robustWeight: 1 }, computed.rho) : null
   const buffer = rowBuffer()
   const rows = row !== null && evaluateRow(row, north, east, buffer) ? [buffer.r1, buffer.r2].slice(0, row.rows) : []
+  const root = Math.sqrt(measure.robustWeight)
   const gradients = [[buffer.r1x, buffer.r1y], [buffer.r2x, buffer.r2y]].slice(0, rows.length)
-    .map(([byX, byY]) => Float64Array.from({ length: p }, (_, j) => byX! * position[2 + j]! + byY! * position[2 + p + j]!))
+    .map(([byX, byY]) => Float64Array.from({ length: p }, (_, j) => root * (byX! * position[2 + j]! + byY! * position[2 + p + j]!)))
   const isUsed = measure.status === 'used' && covariance !== null && rows.length > 0
-  const influence = isUsed ? influenceOf({ residuals: rows, gradients }, covariance, scaleSquared) : null
+  const influence = isUsed ? influenceOf({ residuals: rows.map((r) => r * root), gradients }, covariance, scaleSquared) : null
   return {
     id: measure.id,
     status: measure.status,
@@ -93,7 +94,7 @@ export function skyResidual(measure: SkyMeasure, context: SkyResidualContext): R
     observedMinusComputed: differences(measure, computed),
     normalised: rows.length > 0 ? Math.sqrt(rows.reduce((sum, r) => sum + r * r, 0)) : null,
     rows,
-    weight: measure.status === 'used' ? measure.weight : 0,
+    weight: measure.status === 'used' ? measure.weight * measure.robustWeight : 0,
     leverage: influence?.leverage ?? null,
     cook: influence?.cook ?? null,
     inOrbitPlane: carriedBack(measure, computed, context.carryBack),

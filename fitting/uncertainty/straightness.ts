@@ -6,9 +6,10 @@
  */
 import { curvedLinePath } from '../models/curved-line'
 import { linePath } from '../models/relative-line'
-import { median, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
+import type { SkyMeasure, SkyMeasures } from '../models/sky-measure'
 import { settlePath, type SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
+import { median } from '../solve/median'
 import { cos, sin } from '../elementary'
 import { normalShares, studentShares } from './distributions'
 

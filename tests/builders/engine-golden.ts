@@ -34,7 +34,7 @@ function relativeRequest(index: number): FitRequest {
   return {
     kind: 'relative',
     measures: index % 8 === 3 ? withMixedForms(measures, index) : measures,
-    settings: { shortestPeriodYr: span, seed: index },
+    settings: { shortestPeriodYr: span, seed: index, loss: index % 24 === 5 ? 'biweight' : 'squares', model: index % 24 === 7 ? 'line' : 'kepler' },
   }
 }
 

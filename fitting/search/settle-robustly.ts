@@ -1,0 +1,79 @@
+/**
+ * The last step with Tukey's biweight: weights from the residuals, a full fit with these weights, and again until the weights settle.
+ * The scale is taken anew in the first five rounds and then held, so that the rounds converge.
+ * Source: Beaton & Tukey 1974, Technometrics 16, 147; iterated reweighting: Holland & Welsch 1977, Comm. Statistics A6, 813.
+ */
+import { withRobustWeights, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
+import type { SkyPath } from '../models/sky-path'
+import { evaluateRow, rowBuffer, skyRow } from '../models/sky-rows'
+import { biweight, robustScale, trimmedSum, type RobustScale } from '../solve/biweight'
+import { settlePath, settleStarts, type SettledPath } from './settle-path'
+
+const LARGEST_ROUNDS = 40
+const SCALE_ROUNDS = 5
+const WEIGHTS_SETTLED = 1e-7
+
+/**
+ * Whitened lengths without robust weights.
+ * @param path any path on the sky.
+ * @param values inside its domain.
+ * @param measures any measures but limits.
+ * @returns d, one a measure; Infinity where a direction is asked for at the primary itself.
+ */
+export function distancesOf(path: SkyPath, values: ArrayLike<number>, measures: readonly SkyMeasure[]): Float64Array {
+  const position = new Float64Array(2 + 2 * path.parameters)
+  const buffer = rowBuffer()
+  path.prepare(values)
+  return Float64Array.from(measures, (measure) => {
+    path.at(measure.epochYr, position, false)
+    const [x, y] = [position[0]!, position[1]!]
+    const row = skyRow({ ...measure, robustWeight: 1 }, Math.sqrt(x * x + y * y))
+    return evaluateRow(row, x, y, buffer) ? Math.sqrt(buffer.r1 * buffer.r1 + buffer.r2 * buffer.r2) : Infinity
+  })
+}
+
+/**
+ * True where a measure has two rows.
+ * @param measure any measure.
+ * @returns false for a position angle or a separation alone.
+ */
+export function hasTwoRows(measure: SkyMeasure): boolean {
+  return measure.form !== 'theta' && measure.form !== 'rho'
+}
+
+/** The orbit, or the one turned by 180° where that fits more of the measures: quadrants may have been chained from a wrong one. */
+function betterTurned(path: SkyPath, values: ArrayLike<number>, used: readonly SkyMeasure[]): Float64Array {
+  const own = Float64Array.from(values)
+  const turned = own.map((value, j) => (j < 3 ? value : -value))
+  return trimmedSum(distancesOf(path, turned, used)) < trimmedSum(distancesOf(path, own, used)) ? turned : own
+}
+
+/** The measures with their last weights, and one solution a start, best first. */
+export interface RobustlySettled {
+  measures: SkyMeasures
+  solutions: SettledPath[]
+}
+
+/**
+ * Fits an orbit with biweights.
+ * @param path the orbit's path.
+ * @param measures prepared measures.
+ * @param starts best candidate first, at least one, inside the domain.
+ * @returns weighted measures and solutions.
+ */
+export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: readonly ArrayLike<number>[]): RobustlySettled {
+  const { used } = measures
+  let values = betterTurned(path, starts[0]!, used)
+  let weighted = measures
+  let scale: RobustScale = { pair: 1, single: 1 }
+  for (let round = 0; round < LARGEST_ROUNDS; round++) {
+    const distances = distancesOf(path, values, used)
+    if (round < SCALE_ROUNDS) scale = robustScale(distances, (i) => hasTwoRows(used[i]!))
+    const weights = distances.map((d, i) => biweight(d, hasTwoRows(used[i]!) ? scale.pair : scale.single))
+    const change = weights.reduce((largest, weight, i) => Math.max(largest, Math.abs(weight - weighted.used[i]!.robustWeight)), 0)
+    weighted = withRobustWeights(measures, weights)
+    values = settlePath(path, weighted.used, values).solution.values as Float64Array<ArrayBuffer>
+    if (round >= SCALE_ROUNDS && change <= WEIGHTS_SETTLED) break
+  }
+  return { measures: weighted, solutions: settleStarts(path, weighted.used, [values, ...starts.slice(1)], () => undefined) }
+}
