@@ -22,11 +22,11 @@ export function useFitProgress(targetId: string, onFinished: () => void) {
     } else if (wasGoing) onFinished()
   }
 
-  useEvents([`target:${targetId}`], (event) => {
+  const { state: streamState } = useEvents([`target:${targetId}`], (event) => {
     if (event.name === 'fit.progress') progress.value = { fraction: event.data.fraction ?? null, stage: event.data.stage ?? null }
     if (event.name !== 'fit.progress' || !isGoing.value) void read()
   }, () => void read())
   onMounted(() => void read())
 
-  return { fit, progress, isGoing }
+  return { fit, progress, isGoing, streamState }
 }

@@ -3,10 +3,10 @@ export type Theme = (typeof THEMES)[number]
 
 const YEAR_S = 365 * 24 * 3600
 
-/** The theme chosen, kept in a cookie so that the server already renders the page in it. */
+/** The theme chosen, kept in a cookie so that the server already renders the page in it; without a choice there is no cookie, and it is day. */
 export function useTheme() {
-  const theme = useCookie<Theme>('semilatus-theme', { default: () => 'day', maxAge: YEAR_S, sameSite: 'lax', path: '/' })
-  const shown = computed<Theme>(() => (THEMES.includes(theme.value) ? theme.value : 'day'))
+  const theme = useCookie<Theme | null>('semilatus-theme', { maxAge: YEAR_S, sameSite: 'lax', path: '/' })
+  const shown = computed<Theme>(() => THEMES.find(known => known === theme.value) ?? 'day')
   return {
     theme: shown,
     choose(next: Theme) {
