@@ -11,7 +11,7 @@ import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncer
 import { carryBackOf, combinedAngle, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
 import { proposalsOf } from '../uncertainty/proposals'
 import { relativeWarnings } from '../uncertainty/relative-warnings'
-import { skyResidual } from '../uncertainty/sky-residuals'
+import { skyResidual, type SkyResidualContext } from '../uncertainty/sky-residuals'
 import { straightnessOf } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
 import { stopSentence } from './stop-sentence'
@@ -113,10 +113,11 @@ export function judgeRelative(judgement: Judgement): FitResult {
   const errors = errorsOf(solutions[0]!, measures)
   const elements = relativeElements({ values: solution.values, covariance: errors.covariance, referenceEpochYr, lastEpochYr })
   const partial = statisticsOf(judgement, errors, elements)
-  const residuals = measures.all.map((measure) => skyResidual(measure, {
+  const context: SkyResidualContext = {
     path: keplerPath(referenceEpochYr), values: solution.values, covariance: errors.covariance,
     scaleSquared: partial.reducedChiSquare, carryBack: carryBackOf(elements),
-  }))
+  }
+  const residuals = measures.all.map((measure) => skyResidual(measure, context))
   const statistics: FitStatistics = {
     ...partial,
     rms: rmsByCoordinate(residuals, SKY_UNITS),
@@ -143,7 +144,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     statistics,
     residuals,
     alternatives,
-    proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, { path: keplerPath(referenceEpochYr), values: solution.values }) : [],
+    proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, context) : [],
     warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
     state: {
       model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),
