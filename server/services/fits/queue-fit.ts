@@ -16,6 +16,7 @@ import { listStandingMeasures } from '../../repositories/measure-repository'
 import type { MeasureRecord } from '../../repositories/measure-repository'
 import type { TargetRow } from '../../repositories/target-repository'
 import { announceFit } from './announce-fit'
+import { refusalOf } from './fit-summary'
 import { jobKeyOf } from './job-key'
 import { supersedeWaitingFits } from './supersede-fits'
 
@@ -59,7 +60,8 @@ export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<Q
   const requestText = canonicalJson(request)
   const input = { targetId: order.target.id, inputHash: sha256Hex(requestText), engineVersion: ENGINE_VERSION }
 
-  const twins = await listFitsOfInput(tx, input)
+  // A fit that only failed because the program broke down says nothing about its request, which may be tried again.
+  const twins = (await listFitsOfInput(tx, input)).filter(twin => refusalOf(twin)?.code !== 'worker-failed')
   const standing = twins.find(twin => twin.state !== 'superseded' && twin.state !== 'declined')
   if (standing) return { fitId: standing.id, isNew: false }
 

@@ -17,7 +17,7 @@ import { measureView } from '../fits/measure-view'
 import { viewFit } from '../fits/read-fit'
 import { targetSummary } from './target-summary'
 
-/** The sheet of a target, with the fit asked for or else its latest. Open to signed-in people. */
+/** The sheet of a target, with the fit asked for or else the latest that counts. Open to signed-in people. */
 export async function readTarget(ctx: Context, targetId: string, fitId: string | null): Promise<TargetView> {
   return viewTarget(ctx, ctx.reads, targetId, fitId)
 }
@@ -48,9 +48,12 @@ export async function viewTarget(ctx: Context, reads: Reads, targetId: string, f
   }
 }
 
-/** A fit of another target is none of this one's. */
+/**
+ * The fit asked for (one of another target is none of this one's), else the newest that waits or was accepted, else the newest:
+ * what was superseded or declined is looked at by asking for it.
+ */
 async function shownFit(ctx: Context, reads: Reads, fits: readonly FitRecord[], fitId: string | null): Promise<FitView | null> {
   if (fitId !== null && !fits.some(fit => fit.id === fitId)) throw notFound()
-  const shown = fitId ?? fits[0]?.id
+  const shown = fitId ?? (fits.find(fit => fit.state !== 'superseded' && fit.state !== 'declined') ?? fits[0])?.id
   return shown === undefined ? null : viewFit(ctx, reads, shown)
 }

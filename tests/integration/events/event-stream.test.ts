@@ -1,4 +1,4 @@
-import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { sendBatch } from '../../../server/services/batches/send-batch'
 import { openTopics } from '../../../server/services/events/open-topics'
 import { mountServer } from '../../builders/mounted-server'
@@ -18,6 +18,7 @@ beforeEach(async () => {
   pair = await addPairHouse(house)
 })
 afterEach(async () => {
+  vi.useRealTimers()
   await server?.close()
   server = null
   await house.close()
@@ -97,6 +98,20 @@ describe('the event stream', () => {
     opened.subscribe(({ event }) => told.push(event.data.fitId))
     house.ctx.events.publish({ topic: 'desk', name: 'desk.changed', data: { fitId: 'after' } })
     expect(told).toEqual(['between', 'after'])
+  })
+
+  it('sends a comment every fifteen seconds, and ends with the session', async () => {
+    server = await mountServer(house)
+    vi.useFakeTimers({ toFake: ['setInterval'] })
+    const response = await fetch(`${server.baseUrl}/api/v1/events?topics=desk`, { headers: server.cookieOf(pair.coordinator.sessionId) })
+    const reader = (response.body as ReadableStream<Uint8Array>).getReader()
+    const next = async () => Buffer.from((await reader.read()).value ?? []).toString()
+    expect(await next()).toBe(':\n\n')
+    vi.advanceTimersByTime(15_000)
+    expect(await next()).toBe(':\n\n')
+    await house.database.db.updateTable('session').set({ revoked_at: house.clock.now() }).where('person_id', '=', pair.coordinator.id).execute()
+    vi.advanceTimersByTime(15_000)
+    expect(await reader.read()).toEqual({ done: true, value: undefined })
   })
 
   it('is as open as the things it tells of', async () => {

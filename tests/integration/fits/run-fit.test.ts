@@ -5,6 +5,7 @@ import { runJobsUntilIdle } from '../../../server/jobs/runner/run-until-idle'
 import { sendBatch } from '../../../server/services/batches/send-batch'
 import { withdrawBatch } from '../../../server/services/batches/withdraw-batch'
 import { readFit } from '../../../server/services/fits/read-fit'
+import { requestFit } from '../../../server/services/fits/request-fit'
 import { claimJob } from '../../../server/services/jobs/claim-job'
 import { recoverJobs } from '../../../server/services/jobs/end-job'
 import type { JobTools } from '../../../server/services/jobs/job-tools'
@@ -123,7 +124,7 @@ describe('the job of a fit', () => {
     expect(await auditOf(house, 'fit.done')).toEqual([])
   })
 
-  it('that dies on every try leaves a failed fit that says so', async () => {
+  it('that dies on every try leaves a failed fit that says so, and the very same can be asked for again', async () => {
     const { fitId } = await send()
     for (let attempt = 0; attempt < 5; attempt++) {
       await run(async () => { throw new Error('the worker died') })
@@ -131,5 +132,8 @@ describe('the job of a fit', () => {
     }
     expect(await seen(fitId)).toMatchObject({ state: 'failed', refusal: { code: 'worker-failed' }, job: { state: 'dead', attempts: 5 } })
     expect(await auditOf(house, 'fit.failed', 'job.dead')).toHaveLength(2)
+    const again = await requestFit(pair.coordinator.ctx, pair.target.id, { baseFitId: fitId, setAside: [] })
+    await run()
+    expect(await seen(again.fit.id)).toMatchObject({ number: 2, state: 'done', job: { attempts: 1 } })
   })
 })

@@ -5,12 +5,12 @@ import { listTargets } from '../../../server/services/targets/list-targets'
 import { readTarget } from '../../../server/services/targets/read-target'
 import { createTargetSchema } from '../../../shared/schemas/targets'
 import { addPerson, addProgramme } from '../../builders/people'
-import { acceptedPairFit, addPairHouse } from '../../builders/published-pair'
+import { acceptedPairFit, addPairHouse, sendPairMeasures } from '../../builders/published-pair'
 import type { PairHouse } from '../../builders/published-pair'
 import { createTestHouse } from '../../builders/test-house'
 import type { TestHouse } from '../../builders/test-house'
 import { auditOf } from '../../builders/uploads'
-import { addTarget, publish } from '../../builders/work'
+import { addTarget, publish, rule } from '../../builders/work'
 
 let house: TestHouse
 let pair: PairHouse
@@ -83,6 +83,15 @@ describe('the list of targets', () => {
 })
 
 describe('the sheet of a target', () => {
+  it('shows the accepted fit after a later one was declined, and the declined one to who asks for it', async () => {
+    const accepted = await acceptedPairFit(pair)
+    const declined = await rule(pair.coordinator.ctx, await sendPairMeasures(pair, { from: 2024.6, count: 3, seed: 5, stepYr: 0.4 }), 'decline', 'A different pair.')
+    const sheet = await readTarget(pair.member.ctx, pair.target.id, null)
+    expect(sheet.fit!.id).toBe(accepted.id)
+    expect(sheet.fits.map(fit => fit.state)).toEqual(['declined', 'accepted'])
+    expect((await readTarget(pair.member.ctx, pair.target.id, declined.id)).fit!.id).toBe(declined.id)
+  })
+
   it('shows the fit asked for, and none of another target', async () => {
     const fit = await acceptedPairFit(pair)
     expect((await readTarget(pair.member.ctx, pair.target.id, null)).fit!.id).toBe(fit.id)
