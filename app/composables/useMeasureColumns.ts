@@ -1,3 +1,4 @@
+import { computed, ref } from 'vue'
 import type { FitResult, Residual } from '~~/fitting/types'
 import type { MeasureView } from '#shared/schemas/targets'
 import { formatArcsec, formatDirection, formatEpoch, formatResidual, formatResidualMas } from '#shared/units/angles'

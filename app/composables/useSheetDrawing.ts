@@ -1,6 +1,6 @@
 import type { FitResult, Prediction } from '~~/fitting/types'
 import { predict } from '~~/fitting'
-import { predictedSigmas, sampledEpochsYr, yearsToMark } from '#shared/drawing/prediction-band'
+import { diameterScaleOf, predictedSigmas, sampledEpochsYr, yearsToMark } from '#shared/drawing/prediction-band'
 import { residualChart } from '#shared/drawing/residual-series'
 import type { FitMeasureView } from '#shared/schemas/fits'
 import { useObserverMarks } from './useObserverMarks'
@@ -28,7 +28,7 @@ export function useSheetDrawing({ result, measures, nowYr, published }: Drawn) {
   const chart = computed(() => {
     const shown = result()
     if (!shown) return null
-    return residualChart(shown, measures(), predictedSigmas(predict(shown, sampledEpochsYr(shown, measures(), nowYr()))))
+    return residualChart(shown, measures(), predictedSigmas(predict(shown, sampledEpochsYr(shown, measures(), nowYr())), diameterScaleOf(shown)))
   })
 
   return { marks, lookOf, aside, order, coming, chart }

@@ -1,4 +1,5 @@
 import { defineStore } from 'pinia'
+import { ref } from 'vue'
 import type { Element } from '~~/fitting/types'
 import type { FitView } from '#shared/schemas/fits'
 

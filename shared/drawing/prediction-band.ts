@@ -30,18 +30,26 @@ export function sampledEpochsYr(result: FitResult, subjects: readonly ResidualSu
 /**
  * σ of predictions by the names the residuals use: across is ρ σ_θ, along is σ_ρ.
  * @param predictions from the engine.
- * @returns one entry a prediction that has σ.
+ * @param diameterScaleArcmin the diameter at r = 1 where diameters were measured: σ_d = scale σ_r / r².
+ * @returns one entry a prediction, with the σ that are known.
  */
-export function predictedSigmas(predictions: readonly Prediction[]): PredictedSigma[] {
-  return predictions.map(({ at, values, sigmas }) => ({ at, sigmas: byResidualName(values, sigmas) }))
+export function predictedSigmas(predictions: readonly Prediction[], diameterScaleArcmin: number | null = null): PredictedSigma[] {
+  return predictions.map(({ at, values, sigmas }) => ({ at, sigmas: byResidualName(values, sigmas, diameterScaleArcmin) }))
 }
 
-function byResidualName(values: Record<string, number>, sigmas: Prediction['sigmas']): Record<string, number> {
+function byResidualName(values: Record<string, number>, sigmas: Prediction['sigmas'], diameterScaleArcmin: number | null): Record<string, number> {
   const { thetaDeg, rhoArcsec, ...others } = sigmas
   const named: Record<string, number | null | undefined> = { ...others }
   if (typeof thetaDeg === 'number') named.acrossArcsec = (values.rhoArcsec ?? 0) * thetaDeg * RADIANS_PER_DEGREE
   if (typeof rhoArcsec === 'number') named.alongArcsec = rhoArcsec
+  if (diameterScaleArcmin !== null && typeof sigmas.r === 'number' && values.r) named.diameterArcmin = (diameterScaleArcmin * sigmas.r) / values.r ** 2
   return Object.fromEntries(Object.entries(named).filter((entry): entry is [string, number] => typeof entry[1] === 'number'))
+}
+
+/** The diameter, arcmin, shown at r = 1: r times diameter of any computed place; null where no diameters were measured. */
+export function diameterScaleOf(result: FitResult): number | null {
+  const { r, diameterArcmin } = result.residuals.find(({ computed }) => computed.diameterArcmin !== undefined)?.computed ?? {}
+  return r === undefined || diameterArcmin === undefined ? null : r * diameterArcmin
 }
 
 /**

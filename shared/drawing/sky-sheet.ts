@@ -64,13 +64,23 @@ export function skySheet(result: FitResult, predictions: readonly Prediction[]):
   const corner = freeCorners(obstacles)
   return {
     ...gridOf(frame), ...labelled, focus,
-    curve: outline && pathData(outline, frame.toPx),
+    curve: outline && pathData(outline.shape === 'straight' ? { ...outline, points: reachingTo(outline.points, predictions, frame) } : outline, frame.toPx),
     apsides: apsides && [frame.toPx(apsides[0]), frame.toPx(apsides[1])],
     nodes: nodes && [frame.toPx(nodes[0]), frame.toPx(nodes[1])],
     measures: seen.map(({ id, observed, computed, status }) => ({ id, status, at: frame.toPx(observed), computedAt: frame.toPx(computed) })),
     compassAt: corner.compassAt,
     bar: barAt(scaleBar(frame.pxPerUnit, LONGEST_BAR_PX), corner.isBarAtRight),
   }
+}
+
+/** A straight line is drawn on to the last prediction that lies on the paper. */
+function reachingTo(points: readonly Point[], predictions: readonly Prediction[], frame: DrawingFrame): Point[] {
+  const [begin, end] = [points[0], points[points.length - 1]]
+  if (!begin || !end) return [...points]
+  const along = ({ x, y }: Point) => (x - begin.x) * (end.x - begin.x) + (y - begin.y) * (end.y - begin.y)
+  const ahead = skyPredictions(predictions).map(({ place }) => place).filter(place => isOnPaper(frame.toPx(place)))
+  const sorted = [begin, end, ...ahead].sort((a, b) => along(a) - along(b))
+  return [sorted[0] ?? begin, sorted[sorted.length - 1] ?? end]
 }
 
 /** The outline runs once around from periastron in even steps of the eccentric anomaly: apastron lies half-way. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { predictedSigmas, sampledEpochsYr, yearsToMark } from '../../../../shared/drawing/prediction-band'
+import { diameterScaleOf, predictedSigmas, sampledEpochsYr, yearsToMark } from '../../../../shared/drawing/prediction-band'
 import { residualCsv } from '../../../../shared/drawing/residual-csv'
 import { halfHeight, residualChart } from '../../../../shared/drawing/residual-series'
 import { axisRange, residualSheet } from '../../../../shared/drawing/residual-sheet'
@@ -77,5 +77,18 @@ describe('the band of the prediction', () => {
   it('marks the coming year and then round ones, closer together for a short period', () => {
     expect(yearsToMark(pairResult({ period: element(62, 1, 'yr') }), 2026.9)).toEqual([2027, 2030, 2035, 2040, 2045])
     expect(yearsToMark(pairResult({ period: element(2.6, 0.1, 'yr') }), 2026.93)).toEqual([2027, 2027.2, 2027.4, 2027.6, 2027.8])
+  })
+})
+
+describe('the band of measured diameters', () => {
+  it('follows from σ of r: σ_d = scale σ_r / r²', () => {
+    const result = planeResult({}, { residuals: [residual('a', { r: 0.5, diameterArcmin: 64 })] })
+    expect(diameterScaleOf(result)).toBe(32)
+    const [only] = predictedSigmas([{ at: 10, values: { r: 0.5 }, sigmas: { r: 0.001 }, correlation: null }], 32)
+    expect(only!.sigmas.diameterArcmin).toBeCloseTo(0.128, 12)
+  })
+
+  it('has no scale where none was measured', () => {
+    expect(diameterScaleOf(planeResult({}, { residuals: [residual('a', { r: 0.5 })] }))).toBeNull()
   })
 })
