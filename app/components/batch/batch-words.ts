@@ -31,3 +31,16 @@ export function sendLabel({ good, alreadyHere }: Pick<Counts, 'good' | 'alreadyH
   if (good > 0) return `Send ${formatCount(good, 'new measure')}`
   return alreadyHere > 0 ? `0 new, ${alreadyHere} already here` : 'Nothing to send yet'
 }
+
+/** Whether a batch still holds something of its owner's to decide: rows to send or mend, or a file in which nothing is new. */
+export function isOpenDraft({ good, bad, sent }: Pick<Counts, 'good' | 'bad' | 'sent'>): boolean {
+  return good + bad > 0 || sent === 0
+}
+
+export const BATCH_STEPS = ['Read', 'Mend', 'Send', 'Ruling'] as const
+
+/** Where a batch stands among BATCH_STEPS. */
+export function currentStep(counts: Pick<Counts, 'good' | 'bad' | 'sent'>): number {
+  if (counts.bad > 0) return BATCH_STEPS.indexOf('Mend')
+  return BATCH_STEPS.indexOf(isOpenDraft(counts) ? 'Send' : 'Ruling')
+}
