@@ -3,7 +3,7 @@ import type { ParsedRow } from '../../shared/intake/parsed-row'
 import { toFitMeasure } from '../../shared/intake/to-fit-measure'
 
 /** One seed for every fit of record, kept in its request: the same request repeated gives the same bytes. */
-const SEED = 1
+export const FIT_SEED = 1
 
 export interface StandingMeasure {
   id: string
@@ -45,7 +45,7 @@ export function buildFitRequest(target: FittedTarget, measures: readonly Standin
 
 function settingsOf(target: FittedTarget, { model }: RequestOptions): FitSettings {
   return {
-    seed: SEED,
+    seed: FIT_SEED,
     ...(model ? { model } : {}),
     ...(target.kind === 'plane' && target.radius_unit !== null ? { radiusUnit: target.radius_unit } : {}),
     ...(target.kind === 'plane' && target.diameter_scale_arcmin !== null ? { diameterScaleArcmin: target.diameter_scale_arcmin } : {}),

@@ -3,12 +3,12 @@ import type { Decision, FitState } from '../../shared/schemas/fits'
 
 /**
  * The life of a fit: queued → running → done | failed; done → accepted | declined | superseded; accepted → published.
- * Whatever still waits (also queued, running and failed) can be superseded when newer measures or a refit replace it, and
- * running falls back to queued only through its job, never by a change of the fit. A failed fit has no result to decline:
- * a ruling on it settles its batches and is kept beside it, and its state stays failed.
+ * A queued fit is done at once where the very same request was computed before. Whatever still waits (also queued, running and
+ * failed) can be superseded when newer measures or a refit replace it. A failed fit has no result to decline: a ruling on it
+ * settles its batches and is kept beside it, and its state stays failed.
  */
 const NEXT: Readonly<Record<FitState, readonly FitState[]>> = {
-  queued: ['running', 'failed', 'superseded'],
+  queued: ['running', 'done', 'failed', 'superseded'],
   running: ['running', 'done', 'failed', 'superseded'],
   done: ['accepted', 'declined', 'superseded'],
   failed: ['superseded'],

@@ -1,4 +1,4 @@
-import type { FitResult, Refusal } from '../../../fitting/types'
+import type { FitOutcome, FitResult, Refusal } from '../../../fitting/types'
 import type { FitSummary } from '#shared/schemas/fits'
 import type { FitRecord } from '../../repositories/fit-repository'
 
@@ -8,6 +8,14 @@ export function resultOf(fit: Pick<FitRecord, 'result'>): FitResult | null {
 
 export function refusalOf(fit: Pick<FitRecord, 'refusal'>): Refusal | null {
   return fit.refusal === null ? null : (JSON.parse(fit.refusal) as Refusal)
+}
+
+/** What the engine answered; null where it has not yet. */
+export function outcomeOf(fit: Pick<FitRecord, 'result' | 'refusal'>): FitOutcome | null {
+  const result = resultOf(fit)
+  if (result) return { ok: true, result }
+  const refusal = refusalOf(fit)
+  return refusal ? { ok: false, refusal } : null
 }
 
 /** What a fit says in one line: the statement about its conic, why it stopped, or why there is none. */

@@ -4,20 +4,21 @@ import { ENGINE_VERSION } from '../../../fitting'
 import type { Context, Tx } from '../../context/context'
 import { recordAudit } from '../../audit/record-audit'
 import { canonicalJson, sha256Hex } from '../../domain/canonical-json'
-import { buildFitRequest, fitRole } from '../../domain/fit-request'
+import { buildFitRequest, FIT_SEED, fitRole } from '../../domain/fit-request'
 import type { StandingMeasure } from '../../domain/fit-request'
 import { SETTLED_FIT_STATES } from '../../domain/fit-state'
 import { enqueueJob } from '../../jobs/queue/enqueue-job'
 import { listSentPartsOfTarget } from '../../repositories/batch-part-repository'
 import { insertFitMeasures, insertFitParts, listAcceptedMeasureIds, listFitMeasures } from '../../repositories/fit-content-repository'
-import { insertFit, listFitsInStates, listFitsOfInput, nextFitNumber } from '../../repositories/fit-repository'
+import { getFit, insertFit, listFitsInStates, listFitsOfInput, nextFitNumber } from '../../repositories/fit-repository'
 import { parsedRowOf } from '../../repositories/measure-columns'
 import { listStandingMeasures } from '../../repositories/measure-repository'
 import type { MeasureRecord } from '../../repositories/measure-repository'
 import type { TargetRow } from '../../repositories/target-repository'
 import { announceFit } from './announce-fit'
-import { refusalOf } from './fit-summary'
+import { outcomeOf, refusalOf } from './fit-summary'
 import { jobKeyOf } from './job-key'
+import { settleComputed } from './keep-outcome'
 import { supersedeWaitingFits } from './supersede-fits'
 
 export interface SetAside {
@@ -29,6 +30,8 @@ export interface FitOrder {
   target: TargetRow
   cause: FitView['cause']
   requestedBy: string | null
+  /** The fit that the one who asks worked from; the last accepted where not given. */
+  baseFitId?: string | null
   /** What is left out, by measure; the set-asides of the last accepted fit where not given. */
   setAside?: ReadonlyMap<string, SetAside>
   model?: FitSettings['model']
@@ -51,14 +54,10 @@ export interface QueuedFit {
 export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<QueuedFit | null> {
   const measures = (await listStandingMeasures(tx, order.target.id)).map(standingMeasure)
   if (measures.length === 0) return null
-  const base = (await listFitsInStates(tx, order.target.id, SETTLED_FIT_STATES))[0] ?? null
-  const setAside = order.setAside ?? (base ? await setAsidesOf(tx, base.id) : new Map<string, SetAside>())
-  const request = buildFitRequest(order.target, measures, {
-    setAside: new Set(setAside.keys()),
-    model: order.model,
-  })
-  const requestText = canonicalJson(request)
-  const input = { targetId: order.target.id, inputHash: sha256Hex(requestText), engineVersion: ENGINE_VERSION }
+  const accepted = (await listFitsInStates(tx, order.target.id, SETTLED_FIT_STATES))[0] ?? null
+  const setAside = order.setAside ?? (accepted ? await setAsidesOf(tx, accepted.id) : new Map<string, SetAside>())
+  const request = canonicalJson(buildFitRequest(order.target, measures, { setAside: new Set(setAside.keys()), model: order.model }))
+  const input = { targetId: order.target.id, inputHash: sha256Hex(request), engineVersion: ENGINE_VERSION }
 
   // A fit that only failed because the program broke down says nothing about its request, which may be tried again.
   const twins = (await listFitsOfInput(tx, input)).filter(twin => refusalOf(twin)?.code !== 'worker-failed')
@@ -67,37 +66,49 @@ export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<Q
 
   const fitId = ctx.ids.newId()
   await supersedeWaitingFits(tx, ctx, order.target.id, fitId)
-  const number = await nextFitNumber(tx, order.target.id)
+  await keepFit(tx, ctx, order, { fitId, request, input, baseFitId: order.baseFitId ?? accepted?.id ?? null })
+  await linkContent(tx, { fitId, targetId: order.target.id, measures, setAside })
+  announceFit(ctx, { fitId, targetId: order.target.id, state: 'queued' })
   // The same request gives the same bytes, so what was computed once is taken over instead of being computed again.
-  const computed = twins.find(twin => twin.result !== null || twin.refusal !== null)
+  const computed = twins.map(outcomeOf).find(outcome => outcome !== null)
+  if (computed) await settleComputed(tx, ctx, await getFit(tx, fitId), computed)
+  else await enqueueJob(tx, ctx, { name: 'run-fit', payload: { fitId }, uniqueKey: jobKeyOf(input) })
+  return { fitId, isNew: true }
+}
+
+interface NewFit {
+  fitId: string
+  request: string
+  input: { targetId: string; inputHash: string; engineVersion: string }
+  baseFitId: string | null
+}
+
+async function keepFit(tx: Tx, ctx: Context, order: FitOrder, { fitId, request, input, baseFitId }: NewFit): Promise<void> {
+  const number = await nextFitNumber(tx, input.targetId)
   await insertFit(tx, {
     id: fitId,
-    target_id: order.target.id,
+    target_id: input.targetId,
     number,
-    state: computed ? (computed.result === null ? 'failed' : 'done') : 'queued',
+    state: 'queued',
     requested_by: order.requestedBy,
     cause: order.cause,
-    request: requestText,
+    request,
     input_hash: input.inputHash,
     engine_version: input.engineVersion,
-    seed: request.settings?.seed ?? 1,
-    base_fit_id: base?.id ?? null,
-    result: computed?.result ?? null,
-    refusal: computed?.refusal ?? null,
+    seed: FIT_SEED,
+    base_fit_id: baseFitId,
+    result: null,
+    refusal: null,
     created_at: ctx.clock.now(),
-    finished_at: computed ? ctx.clock.now() : null,
+    finished_at: null,
   })
-  await linkContent(tx, { fitId, targetId: order.target.id, measures, setAside })
   await recordAudit(tx, ctx, {
     event: 'fit.requested',
     subjectKind: 'fit',
     subjectId: fitId,
-    targetId: order.target.id,
+    targetId: input.targetId,
     detail: { number, cause: order.cause, inputHash: input.inputHash, engineVersion: input.engineVersion },
   })
-  if (!computed) await enqueueJob(tx, ctx, { name: 'run-fit', payload: { fitId }, uniqueKey: jobKeyOf(input) })
-  announceFit(ctx, { fitId, targetId: order.target.id, state: computed ? 'done' : 'queued' })
-  return { fitId, isNew: true }
 }
 
 async function setAsidesOf(tx: Tx, fitId: string): Promise<Map<string, SetAside>> {

@@ -28,7 +28,7 @@ export async function requestFit(ctx: Context, targetId: string, wish: FitWish):
     if (!ctx.actor || !target || !mayRequestFit(ctx.actor, { programmeId: target.programme_id })) throw notFound()
     const before = await setAsidesBefore(tx, targetId, wish.baseFitId ?? null)
     const setAside = await decide(tx, ctx, { targetId, wish, before })
-    const queued = await queueFit(tx, ctx, { target, cause: 'refit', requestedBy: ctx.actor.personId, setAside, model: wish.model })
+    const queued = await queueFit(tx, ctx, { target, cause: 'refit', requestedBy: ctx.actor.personId, baseFitId: wish.baseFitId ?? null, setAside, model: wish.model })
     if (!queued) throw wrongState('No measure of this target stands, so there is nothing to fit. Send a batch of measures first.')
     if (queued.isNew) await recordDecisions(tx, ctx, { targetId, fitId: queued.fitId, before, setAside })
     return { fit: fitSummary(await getFit(tx, queued.fitId)), isNew: queued.isNew }

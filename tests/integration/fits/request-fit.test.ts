@@ -71,6 +71,7 @@ describe('asking for a refit', () => {
     expect(third.inputHash).toBe(fit.inputHash)
     expect(third.result).toEqual(fit.result)
     expect(await runJobs(house.ctx)).toBe(0)
+    expect((await auditOf(house, 'fit.done')).map(event => event.detail.number)).toEqual([1, 2, 3])
   })
 
   it('can try a straight line instead', async () => {
