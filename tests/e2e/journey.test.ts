@@ -66,7 +66,7 @@ describe.each([{ name: 'at a desk', size: DESK }, { name: 'on a phone', size: PH
     await expect.poll(() => page.locator('main').innerText()).toContain('rho_limit_arcsec')
     await page.getByRole('button', { name: /^Send 25 new measures/ }).click()
     await page.getByRole('link', { name: /See the residuals/ }).click()
-    await page.waitForURL(/\/targets\//)
+    await page.getByRole('heading', { name: 'Linden 12 AB', level: 1 }).waitFor()
     const wrong = page.getByRole('row').filter({ hasText: '2008.500' })
     await wrong.click()
     await page.getByRole('complementary', { name: 'Measure chosen and changes' }).waitFor()
