@@ -1,7 +1,7 @@
 /** Fits without an orbit: uniform straight motion, or a companion that does not move. */
 import { atan2, hypot, RAD } from '../elementary'
 import { linePath, stillPath } from '../models/relative-line'
-import { rescaleSkyMeasures, type SkyMeasures } from '../models/sky-measure'
+import { rowsOf, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { settlePath, type SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
@@ -12,6 +12,7 @@ import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-s
 import { skyResidual } from '../uncertainty/sky-residuals'
 import { lineStart } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
+import { withEstimatedErrors } from './estimated-errors'
 import type { RelativeRequest } from './fit-relative'
 import { publishedCovariance, SKY_UNITS } from './judge-relative'
 import { refuse } from './refusal'
@@ -47,12 +48,6 @@ function arcOf({ used }: SkyMeasures, path: SkyPath, values: ArrayLike<number>):
   return { firstEpochYr, lastEpochYr, turns: null, trueAnomalyCoveredDeg: null, positionAngleCoveredDeg: Math.min(swept, 360 - swept) }
 }
 
-function withEstimatedErrors(measures: SkyMeasures, { solution }: SettledPath): SkyMeasures {
-  const degrees = solution.residuals.length - solution.values.length
-  const factor = degrees > 0 ? Math.sqrt(solution.chiSquare / degrees) : 0
-  return measures.basis === 'scaled' && factor > 1e-9 ? rescaleSkyMeasures(measures, factor) : measures
-}
-
 /**
  * Fits straight motion or rest.
  * @param request with settings.model 'line' or 'still'.
@@ -65,7 +60,7 @@ export function fitMotion(request: RelativeRequest, prepared: SkyMeasures): FitR
   if (used.length === 0) refuse('too-few-measures', 'Every measure is set aside or is a limit.', 'Use measures of at least two epochs.')
   const referenceEpochYr = (used[0]!.epochYr + used[used.length - 1]!.epochYr) / 2
   const { model, names, path, start } = modelOf(request, prepared, referenceEpochYr)
-  const rowCount = used.reduce((sum, measure) => sum + (measure.form === 'theta' || measure.form === 'rho' ? 1 : 2), 0)
+  const rowCount = used.reduce((sum, measure) => sum + rowsOf(measure), 0)
   if (rowCount < names.length) refuse('too-few-measures', `This motion has ${names.length} unknowns; ${rowCount} coordinates are used.`, 'Add measures.')
   const first = settlePath(path, used, start)
   const measures = withEstimatedErrors(prepared, first)

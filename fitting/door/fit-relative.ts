@@ -1,11 +1,12 @@
 /** The relative orbit from request to result: errors, search or refit, solution, judgement. */
 import { keplerPath, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
-import { effectiveRows, prepareSkyMeasures, rescaleSkyMeasures, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
+import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import { searchRelative, type SearchRequest } from '../search/blind-search'
 import { searchRobustly } from '../search/robust-search'
-import { settleStarts, type SettledPath } from '../search/settle-path'
+import { settleStarts } from '../search/settle-path'
 import { settleRobustly, type RobustlySettled } from '../search/settle-robustly'
 import type { FitResult, FitSettings, FitStart, RelativeMeasure } from '../types'
+import { withEstimatedErrors } from './estimated-errors'
 import { fitMotion } from './fit-motion'
 import { judgeRelative } from './judge-relative'
 import type { Report } from './progress'
@@ -49,7 +50,7 @@ function distinctEpochs(used: readonly SkyMeasure[]): number {
 
 function checkEnough(measures: SkyMeasures): void {
   const { used } = measures
-  const rows = used.reduce((sum, measure) => sum + (measure.form === 'theta' || measure.form === 'rho' ? 1 : 2), 0)
+  const rows = used.reduce((sum, measure) => sum + rowsOf(measure), 0)
   const epochs = distinctEpochs(used)
   if (used.length === 0) refuse('too-few-measures', 'Every measure is set aside or is a limit.', 'Use measures of at least four epochs.')
   if (epochs === 1) refuse('one-epoch', 'All used measures are of one epoch: nothing shows the motion.', 'Add measures of other epochs.')
@@ -84,14 +85,6 @@ function settleAll(request: RelativeRequest, measures: SkyMeasures, starts: Arra
   const path = keplerPath(referenceEpochYr)
   if (isRobust(request) && starts.length > 0) return settleRobustly(path, measures, starts)
   return { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
-}
-
-/** Equal errors take the size that the residuals show; noise-free residuals leave them as they are. */
-function withEstimatedErrors(measures: SkyMeasures, best: SettledPath): SkyMeasures {
-  const { chiSquare, values } = best.solution
-  const degrees = effectiveRows(measures.used) - values.length
-  const factor = degrees > 0 ? Math.sqrt(chiSquare / degrees) : 0
-  return measures.basis === 'scaled' && factor > 1e-9 ? rescaleSkyMeasures(measures, factor) : measures
 }
 
 /**

@@ -5,7 +5,7 @@
  * Defined where p > 0 and 1 + k cos φ + h sin φ > 0 at every measured direction (one side of the asymptotes).
  */
 import { cos, sin } from '../elementary'
-import type { LeastSquaresProblem } from '../solve/levenberg-marquardt'
+import type { LeastSquaresProblem } from '../solve/least-squares-problem'
 import type { PlanePoint } from './plane-measure'
 
 /** Names of the regular parameters, in order. */

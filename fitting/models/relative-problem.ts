@@ -1,5 +1,5 @@
 /** The least-squares problem of a path on the sky and the rows of its measures. */
-import type { LeastSquaresProblem } from '../solve/levenberg-marquardt'
+import type { LeastSquaresProblem } from '../solve/least-squares-problem'
 import type { SkyMeasure } from './sky-measure'
 import type { SkyPath } from './sky-path'
 import { evaluateRow, rowBuffer, skyRow, type SkyRow } from './sky-rows'

@@ -184,10 +184,19 @@ export function withRobustWeights(measures: SkyMeasures, weights: ArrayLike<numb
 }
 
 /**
+ * Rows that a measure gives.
+ * @param measure any form but a limit.
+ * @returns 1 for a position angle or a separation alone, else 2.
+ */
+export function rowsOf(measure: SkyMeasure): 1 | 2 {
+  return measure.form === 'theta' || measure.form === 'rho' ? 1 : 2
+}
+
+/**
  * Rows that the used measures give, each counted by its robust weight.
  * @param used used measures.
  * @returns a whole number.
  */
 export function effectiveRows(used: readonly SkyMeasure[]): number {
-  return Math.round(used.reduce((sum, measure) => sum + (measure.form === 'theta' || measure.form === 'rho' ? 1 : 2) * measure.robustWeight, 0))
+  return Math.round(used.reduce((sum, measure) => sum + rowsOf(measure) * measure.robustWeight, 0))
 }

@@ -107,7 +107,7 @@ function polishRobustly(points: SearchPoints, referenceEpochYr: number, start: F
 function partsOf(measures: readonly SkyMeasure[], handfuls: number, random: RandomStream): (readonly SkyMeasure[])[] {
   const some = (count: number, size: number) =>
     Array.from({ length: size < measures.length ? count : 0 }, () => randomPart(measures, size, random))
-  return [measures, ...some(HALVES, Math.ceil(measures.length / 2)), ...some(handfuls, HANDFUL)]
+  return [measures, ...some(HALVES, Math.floor((measures.length + 1) / 2)), ...some(handfuls, HANDFUL)]
 }
 
 /** The lower of the trimmed sums of an orbit and of the orbit turned by 180°, with the one it belongs to. */

@@ -6,7 +6,8 @@ import { skyProblem, skyRows } from '../models/relative-problem'
 import type { SkyMeasure } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import type { SkyRow } from '../models/sky-rows'
-import { isInsideDomain, solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
+import { isInsideDomain } from '../solve/least-squares-problem'
+import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
 
 const LARGEST_PASSES = 8
 const RHO_SETTLED = 1e-9

@@ -3,7 +3,7 @@
  * The scale is taken anew in the first five rounds and then held, so that the rounds converge.
  * Source: Beaton & Tukey 1974, Technometrics 16, 147; iterated reweighting: Holland & Welsch 1977, Comm. Statistics A6, 813.
  */
-import { withRobustWeights, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
+import { rowsOf, withRobustWeights, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { evaluateRow, rowBuffer, skyRow } from '../models/sky-rows'
 import { biweight, robustScale, trimmedSum, type RobustScale } from '../solve/biweight'
@@ -30,15 +30,6 @@ export function distancesOf(path: SkyPath, values: ArrayLike<number>, measures: 
     const row = skyRow({ ...measure, robustWeight: 1 }, Math.sqrt(x * x + y * y))
     return evaluateRow(row, x, y, buffer) ? Math.sqrt(buffer.r1 * buffer.r1 + buffer.r2 * buffer.r2) : Infinity
   })
-}
-
-/**
- * True where a measure has two rows.
- * @param measure any measure.
- * @returns false for a position angle or a separation alone.
- */
-export function hasTwoRows(measure: SkyMeasure): boolean {
-  return measure.form !== 'theta' && measure.form !== 'rho'
 }
 
 /** The orbit, or the one turned by 180° where that fits more of the measures: quadrants may have been chained from a wrong one. */
@@ -68,8 +59,8 @@ export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: rea
   let scale: RobustScale = { pair: 1, single: 1 }
   for (let round = 0; round < LARGEST_ROUNDS; round++) {
     const distances = distancesOf(path, values, used)
-    if (round < SCALE_ROUNDS) scale = robustScale(distances, (i) => hasTwoRows(used[i]!))
-    const weights = distances.map((d, i) => biweight(d, hasTwoRows(used[i]!) ? scale.pair : scale.single))
+    if (round < SCALE_ROUNDS) scale = robustScale(distances, (i) => rowsOf(used[i]!) === 2)
+    const weights = distances.map((d, i) => biweight(d, rowsOf(used[i]!) === 2 ? scale.pair : scale.single))
     const change = weights.reduce((largest, weight, i) => Math.max(largest, Math.abs(weight - weighted.used[i]!.robustWeight)), 0)
     weighted = withRobustWeights(measures, weights)
     values = settlePath(path, weighted.used, values).solution.values as Float64Array<ArrayBuffer>

@@ -4,12 +4,11 @@
  *   circle not excluded while exp(−e²/2σ²) > 0.05.
  * Source: profile likelihood: Venzon & Moolgavkar 1988, Applied Statistics 37, 87; circle: Lucy & Sweeney 1971, AJ 76, 544 (from memory).
  */
-import { exp } from '../elementary'
 import type { Conic, Element } from '../types'
+import { isCircleExcluded } from './circle-test'
 import { normalShares } from './distributions'
 
 const PARABOLA_EXCLUDED_FROM = 4
-const CIRCLE_EXCLUDED_BELOW = 0.05
 /** e within this of 0 or 1 is that to rounding. */
 const EXACT = 1e-9
 
@@ -45,7 +44,7 @@ export function planeConic(shape: PlaneShape): Conic {
   const beyond = delta < Infinity ? normalShares(Math.sqrt(delta)).lower : 1
   const probabilityBound = hasErrors ? (e < 1 ? beyond : 1 - beyond) : null
   const parabolaExcluded = hasErrors ? delta >= PARABOLA_EXCLUDED_FROM : null
-  const circleExcluded = sigma !== null && sigma > 0 ? exp((-e * e) / (2 * sigma * sigma)) <= CIRCLE_EXCLUDED_BELOW : null
+  const circleExcluded = isCircleExcluded(e, sigma)
   const remarks = [
     probabilityBound === null ? 'its errors are not known' : `probability of being bound ${probabilityBound.toFixed(3)}`,
     parabolaExcluded === false ? 'a parabola is not excluded' : '',

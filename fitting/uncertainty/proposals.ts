@@ -3,9 +3,9 @@
  *   set aside where d > 6 s; change the quadrant instead where θ + 180° gives d' < 0.3 d and d' < 5 s.
  */
 import { PI } from '../elementary'
-import type { SkyMeasure } from '../models/sky-measure'
+import { rowsOf, type SkyMeasure } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
-import { distancesOf, hasTwoRows } from '../search/settle-robustly'
+import { distancesOf } from '../search/settle-robustly'
 import { BIWEIGHT_REACH, robustScale } from '../solve/biweight'
 import type { Proposal, Residual } from '../types'
 
@@ -27,10 +27,10 @@ function withOtherQuadrant(measure: SkyMeasure): SkyMeasure {
 export function proposalsOf(used: readonly SkyMeasure[], residuals: readonly Residual[], orbit: { path: SkyPath; values: ArrayLike<number> }): Proposal[] {
   const lengths = new Map(residuals.map((residual) => [residual.id, residual.normalised ?? 0]))
   const distances = used.map((measure) => lengths.get(measure.id) ?? 0)
-  const scale = robustScale(distances, (i) => hasTwoRows(used[i]!))
+  const scale = robustScale(distances, (i) => rowsOf(used[i]!) === 2)
   const changed = distancesOf(orbit.path, orbit.values, used.map(withOtherQuadrant))
   return used.flatMap((measure, i): Proposal[] => {
-    const s = hasTwoRows(measure) ? scale.pair : scale.single
+    const s = rowsOf(measure) === 2 ? scale.pair : scale.single
     const d = distances[i]!
     if (!(d > BIWEIGHT_REACH * s) || !(s > 0)) return []
     const hasQuadrant = (measure.form === 'polar' || measure.form === 'theta') && !measure.isAmbiguous

@@ -8,15 +8,15 @@ import { largestDrift, stateFromEccentric } from '../conic/constants'
 import { trueFromMeanRad } from '../conic/anomalies'
 import { thieleInnesFromCampbell } from '../conic/thiele-innes'
 import { solveKeplerInto } from '../conic/kepler'
-import { atan2, cos, exp, hypot, PI, RAD, sin, TWO_PI } from '../elementary'
+import { atan2, cos, hypot, PI, RAD, sin, TWO_PI } from '../elementary'
 import type { Conic, Constants, Element, FitStatistics } from '../types'
+import { isCircleExcluded } from './circle-test'
 import { elementOf, type ErrorScale, type Quantity } from './error-scale'
 import type { RelativeElements } from './relative-elements'
 import type { CarryBack } from './sky-residuals'
 
 /** Below this |cos i| the orbit is seen on edge and a measure cannot be carried back onto it. */
 export const EDGE_ON_BELOW = 0.05
-const CIRCLE_EXCLUDED_BELOW = 0.05
 const SKY_FRAME = 'north, east, towards the observer; the third component has no known sign without velocities'
 
 /** σ of the node above which node and argument of periastron are not determined apart. */
@@ -38,7 +38,7 @@ export interface Errors {
 export function relativeConic(elements: RelativeElements, errors: Errors): Conic {
   const eccentricity = elementOf(elements.quantities.eccentricity, errors.covariance, errors.scale)
   const { value: e, sigma } = eccentricity
-  const circleExcluded = sigma !== null && sigma > 0 ? exp((-e * e) / (2 * sigma * sigma)) <= CIRCLE_EXCLUDED_BELOW : null
+  const circleExcluded = isCircleExcluded(e, sigma)
   const circle = circleExcluded === null ? '' : circleExcluded ? '; a circle is excluded' : '; a circle is not excluded'
   return {
     class: elements.isCircle ? 'circle' : 'ellipse',

@@ -1,4 +1,4 @@
-import type { LeastSquaresProblem } from '../../fitting/solve/levenberg-marquardt'
+import type { LeastSquaresProblem } from '../../fitting/solve/least-squares-problem'
 
 /** Jacobian of a problem's whitened residuals by central differences, row-major; for comparison with the analytic one. */
 export function centralDifferences(problem: LeastSquaresProblem, values: ArrayLike<number>, relativeStep = 1e-6): Float64Array {

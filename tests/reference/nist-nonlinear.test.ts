@@ -7,7 +7,8 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 import { covarianceOf } from '../../fitting/solve/covariance'
-import { solveLeastSquares, type LeastSquaresProblem } from '../../fitting/solve/levenberg-marquardt'
+import type { LeastSquaresProblem } from '../../fitting/solve/least-squares-problem'
+import { solveLeastSquares } from '../../fitting/solve/levenberg-marquardt'
 
 type Formula = (b: ArrayLike<number>, x: number) => number
 interface Certified {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { covarianceOf } from '../../../../fitting/solve/covariance'
-import { solveLeastSquares, type LeastSquaresProblem, type Solution } from '../../../../fitting/solve/levenberg-marquardt'
+import type { LeastSquaresProblem } from '../../../../fitting/solve/least-squares-problem'
+import { solveLeastSquares, type Solution } from '../../../../fitting/solve/levenberg-marquardt'
 import { centralDifferences } from '../../../builders/central-differences'
 
 /** y = a + b x with one σ a row, whitened. */
