@@ -1,4 +1,5 @@
 import { request } from 'node:http'
+import { connect } from 'node:net'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { openHouse } from '../../../server/http/house'
 import { mountServer } from '../../builders/mounted-server'
@@ -76,6 +77,18 @@ test('a body over the cap without a length is refused while it comes, and the se
   })
   expect(status).toBe(413)
   expect((await keeper.call('GET', '/healthz')).status).toBe(200)
+})
+
+test('a body that ends before its length is no body: nothing is written, and the server lives on', async () => {
+  const { hostname, port } = new URL(server.baseUrl)
+  await new Promise<void>((resolve) => {
+    const socket = connect(Number(port), hostname, () => {
+      socket.write(`POST ${PROGRAMMES} HTTP/1.1\r\nHost: ${hostname}\r\nContent-Type: application/json\r\nContent-Length: 1000\r\n\r\n{"name":"Half"}`, () => socket.destroy())
+    })
+    socket.on('close', () => resolve())
+  })
+  expect((await keeper.call('GET', '/healthz')).status).toBe(200)
+  expect(await countProgrammes()).toBe(0)
 })
 
 test('a request that a page of another site sends is refused before anything is done', async () => {
