@@ -3,7 +3,12 @@ import type { BatchRowView, BatchView, CellProblem } from '#shared/schemas/batch
 export const ROW_FILTERS = ['bad', 'note', 'good', 'already-here', 'sent', 'all'] as const
 export type RowFilter = (typeof ROW_FILTERS)[number]
 
-const hasNote = (row: BatchRowView) => row.problems.some(problem => problem.severity === 'note')
+/** The problems of a row that are worth telling beside it: of one that is already here its state says all. */
+export function toldProblems(row: BatchRowView): CellProblem[] {
+  return row.state === 'already-here' ? [] : row.problems
+}
+
+const hasNote = (row: BatchRowView) => toldProblems(row).some(problem => problem.severity === 'note')
 
 /** Whether a row belongs to what is being looked at. */
 export function rowMatches(row: BatchRowView, filter: RowFilter): boolean {
@@ -65,7 +70,7 @@ export interface ProblemGroup {
 
 export function groupProblems(rows: readonly BatchRowView[]): ProblemGroup[] {
   const groups = new Map<string, ProblemGroup>()
-  for (const problem of rows.flatMap(row => row.problems)) {
+  for (const problem of rows.flatMap(toldProblems)) {
     const key = [problem.severity, problem.column, problem.reason, problem.remedy].join('\u0000')
     const group = groups.get(key) ?? { key, severity: problem.severity, column: problem.column, reason: problem.reason, remedy: problem.remedy, rowNumbers: [] }
     group.rowNumbers.push(problem.rowNumber)

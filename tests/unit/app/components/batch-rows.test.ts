@@ -45,6 +45,12 @@ describe('problems gathered', () => {
     expect(groups.map(group => [group.severity, group.rowNumbers])).toEqual([['error', [3, 9]], ['note', [2]]])
   })
 
+  it('that a measure is already here is not told again beside each of its rows', () => {
+    const here = row(2, [problem(2, null, 'note')], 'already-here')
+    expect(groupProblems([here])).toEqual([])
+    expect(filterChoices([here]).map(choice => choice.filter)).toEqual(['already-here', 'all'])
+  })
+
   it.each([[[16], 'row 16'], [[16, 18], 'rows 16 and 18'], [[1, 2, 3, 4], 'rows 1, 2, 3 and 4'], [[1, 2, 3, 4, 5, 6], 'rows 1, 2, 3, 4 and 2 more']])('rows %j are named %s', (rows, text) => {
     expect(rowsText(rows)).toBe(text)
   })
