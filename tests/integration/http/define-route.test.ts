@@ -92,7 +92,8 @@ test('a body that ends before its length is no body: nothing is written, and the
 })
 
 test('a request that a page of another site sends is refused before anything is done', async () => {
-  for (const headers of [{ 'sec-fetch-site': 'cross-site' }, { 'sec-fetch-site': 'same-site' }, { origin: 'https://elsewhere.example' }, { origin: 'null' }]) {
+  const foreign: Record<string, string>[] = [{ 'sec-fetch-site': 'cross-site' }, { 'sec-fetch-site': 'same-site' }, { origin: 'https://elsewhere.example' }, { origin: 'null' }]
+  for (const headers of foreign) {
     expect(problemOf(await keeper.call('POST', PROGRAMMES, { json: { name: 'From elsewhere' }, headers }))).toEqual([403, 'cross-site'])
   }
   expect(await countProgrammes()).toBe(0)
