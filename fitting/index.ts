@@ -1,6 +1,8 @@
 /** The engine's only door. */
 export { apparentPlace, apparentPlaces, type ApparentPlace, type CampbellElements } from './conic/ephemeris'
 export { fitOrbit } from './door/fit-orbit'
+export { compareFits } from './door/compare-fits'
+export { gainByEpoch } from './door/gain-by-epoch'
 export { predict } from './door/predict'
 export { LARGEST_MEASURES } from './door/validate-measures'
 export { randomStream, type RandomStream } from './random'

@@ -210,6 +210,10 @@ export interface FitStatistics {
   conditionNumber: number | null
   /** formal: every σ stated; scaled: none stated; mixed: the median stated was taken for the missing. */
   errorBasis: 'formal' | 'scaled' | 'mixed'
+  /** Where errors were estimated (scaled): the standard error of every measure alike, in arcsec or by coordinate of a plane fit. */
+  estimatedSigma?: Record<string, { value: number; unit: string }>
+  /** Parameters that the measures determine; below `parameters` the problem is singular. */
+  rank?: number
   arc: {
     firstEpochYr: number | null
     lastEpochYr: number | null
@@ -252,4 +256,35 @@ export interface Prediction {
   /** Same keys as values; null without covariance. */
   sigmas: Record<string, number | null>
   correlation: number | null
+}
+
+/** The error that a planned measure would have. */
+export type MeasureSigma =
+  | { kind: 'relative'; sigmaThetaRad: number; sigmaRhoArcsec: number }
+  | { kind: 'plane'; sigmaR: number }
+
+/** What one more measure would add. */
+export interface Gain {
+  /** relative: Julian year; plane: φ in degrees. */
+  at: number
+  /** Information gained, ½ ln det(I + G C Gᵀ), natural units, ≥ 0. */
+  information: number
+  /** Standard error of each published element after that measure, in the element's unit. */
+  sigmasAfter: Record<string, number | null>
+}
+
+/** Do several fits agree with the fit of their pooled measures? */
+export interface Agreement {
+  /** χ² of the pooled fit minus the sum of the parts', ≥ 0 up to rounding; arcsec² (or the unit of r squared) where errors were estimated. */
+  q: number
+  /** Degrees of freedom of Q and of the parts together. */
+  degreesOfFreedom: number
+  partDegreesOfFreedom: number
+  /** Q taken as χ²: for calibrated errors only; null where errors were estimated from the residuals. */
+  probabilityChiSquare: number | null
+  /** (Q/ν_Q)/(Σχ²/Σν) and its probability; null where the parts have no degrees of freedom. */
+  f: number | null
+  probabilityF: number | null
+  /** In words, by F where there is one. */
+  statement: string
 }

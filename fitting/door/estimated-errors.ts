@@ -1,6 +1,8 @@
 /** Errors estimated from the residuals, where no measure states one. */
 import { effectiveRows, rescaleSkyMeasures, type SkyMeasures } from '../models/sky-measure'
+import type { PlanePoints } from '../models/plane-measure'
 import type { SettledPath } from '../search/settle-path'
+import type { FitStatistics } from '../types'
 
 /** Residuals below this part of the provisional errors are rounding and estimate nothing. */
 const NOISE_FREE = 1e-9
@@ -16,4 +18,26 @@ export function withEstimatedErrors(measures: SkyMeasures, { solution }: Settled
   const degrees = effectiveRows(measures.used) - solution.values.length
   const factor = degrees > 0 ? Math.sqrt(solution.chiSquare / degrees) : 0
   return measures.basis === 'scaled' && factor > NOISE_FREE ? rescaleSkyMeasures(measures, factor) : measures
+}
+
+/**
+ * The estimated error of measures on the sky, for the statistics.
+ * @param measures with their last errors.
+ * @returns one σ for all, arcsec; nothing where errors were stated.
+ */
+export function estimatedSigma(measures: SkyMeasures): Pick<FitStatistics, 'estimatedSigma'> {
+  if (measures.basis !== 'scaled') return {}
+  return { estimatedSigma: { position: { value: measures.used[0]!.sigmaAlong, unit: 'arcsec' } } }
+}
+
+/**
+ * The estimated error of measures in the plane, for the statistics.
+ * @param points with their last errors.
+ * @returns one σ for each coordinate measured; nothing where errors were stated.
+ */
+export function estimatedPlaneSigma(points: PlanePoints): Pick<FitStatistics, 'estimatedSigma'> {
+  if (points.basis !== 'scaled') return {}
+  const estimated: NonNullable<FitStatistics['estimatedSigma']> = {}
+  for (const point of points.used) estimated[point.coordinate] = { value: point.sigma, unit: point.coordinate === 'r' ? points.unit : 'arcmin' }
+  return { estimatedSigma: estimated }
 }

@@ -12,7 +12,7 @@ import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-s
 import { skyResidual } from '../uncertainty/sky-residuals'
 import { lineStart } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
-import { withEstimatedErrors } from './estimated-errors'
+import { estimatedSigma, withEstimatedErrors } from './estimated-errors'
 import type { RelativeRequest } from './fit-relative'
 import { publishedCovariance, SKY_UNITS } from './judge-relative'
 import { refuse } from './refusal'
@@ -85,7 +85,7 @@ interface MotionJudgement {
 function judgeMotion({ model, names, path, settled, measures, referenceEpochYr, seed, equinox }: MotionJudgement): FitResult {
   const { values, residuals: rows, jacobian, chiSquare, reason } = settled.solution
   const degreesOfFreedom = rows.length - values.length
-  const { matrix, conditionNumber } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
+  const { matrix, conditionNumber, rank } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
   const scale = errorScale(measures.basis, chiSquare, degreesOfFreedom)
   const reducedChiSquare = degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null
   const residuals = measures.all.map((measure) => skyResidual(measure, { path, values, covariance: matrix, scaleSquared: reducedChiSquare, carryBack: () => null }))
@@ -104,7 +104,7 @@ function judgeMotion({ model, names, path, settled, measures, referenceEpochYr, 
     constants: null,
     statistics: {
       measures: measures.all.length, used: measures.used.length, rows: rows.length, parameters: values.length, degreesOfFreedom, chiSquare, reducedChiSquare,
-      rms: rmsByCoordinate(residuals, SKY_UNITS), conditionNumber: conditionNumber < Infinity ? conditionNumber : null, errorBasis: measures.basis,
+      rms: rmsByCoordinate(residuals, SKY_UNITS), conditionNumber: conditionNumber < Infinity ? conditionNumber : null, errorBasis: measures.basis, rank, ...estimatedSigma(measures),
       arc: arcOf(measures, path, values),
       byObserver: statisticsByObserver(residuals, measures.all.map((measure) => measure.observer), Object.keys(SKY_UNITS)),
     },

@@ -13,6 +13,7 @@ import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-s
 import { planeConic } from '../uncertainty/plane-conic'
 import { planeWarnings } from '../uncertainty/plane-warnings'
 import { ENGINE_VERSION } from '../version'
+import { estimatedPlaneSigma } from './estimated-errors'
 import { publishedCovariance } from './judge-relative'
 import { stopSentence } from './stop-sentence'
 
@@ -101,7 +102,7 @@ export function judgePlane(judgement: PlaneJudgement): FitResult {
   const { points, solution, settings, parabolaChiSquare } = judgement
   const { values, chiSquare, residuals: rows, jacobian } = solution
   const degreesOfFreedom = rows.length - values.length
-  const { matrix, conditionNumber } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
+  const { matrix, conditionNumber, rank } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
   const scale = errorScale(points.basis, chiSquare, degreesOfFreedom)
   const reducedChiSquare = degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null
   const context: PointContext = { values, covariance: matrix, scaleSquared: reducedChiSquare, diameterScale: points.diameterScale }
@@ -112,6 +113,8 @@ export function judgePlane(judgement: PlaneJudgement): FitResult {
     rms: rmsByCoordinate(residuals, units),
     conditionNumber: conditionNumber < Infinity ? conditionNumber : null,
     errorBasis: points.basis,
+    rank,
+    ...estimatedPlaneSigma(points),
     arc: arcOf(points.used),
     byObserver: statisticsByObserver(residuals, points.all.map((point) => point.observer), Object.keys(units)),
   }

@@ -14,6 +14,7 @@ import { relativeWarnings } from '../uncertainty/relative-warnings'
 import { skyResidual, type SkyResidualContext } from '../uncertainty/sky-residuals'
 import { straightnessOf } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
+import { estimatedSigma } from './estimated-errors'
 import { stopSentence } from './stop-sentence'
 
 /** Coordinates whose scatter is reported. */
@@ -38,10 +39,10 @@ export function publishedCovariance(matrix: number[][] | null, published: number
   return matrix === null || published === null ? null : matrix.map((row) => row.map((value) => value * published * published))
 }
 
-function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { conditionNumber: number } {
+function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { conditionNumber: number; rank: number } {
   const { jacobian, residuals, values, chiSquare } = settled.solution
-  const { matrix, conditionNumber } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
-  return { covariance: matrix, conditionNumber, scale: errorScale(measures.basis, chiSquare, effectiveRows(measures.used) - values.length) }
+  const { matrix, conditionNumber, rank } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
+  return { covariance: matrix, conditionNumber, rank, scale: errorScale(measures.basis, chiSquare, effectiveRows(measures.used) - values.length) }
 }
 
 function publishedElements(elements: RelativeElements, errors: Errors): Record<string, Element> {
@@ -81,7 +82,7 @@ function alternativesOf(judgement: Judgement, scaleSquared: number, lastEpochYr:
   })
 }
 
-function statisticsOf(judgement: Judgement, errors: { conditionNumber: number }, elements: RelativeElements): Omit<FitStatistics, 'rms' | 'byObserver'> {
+function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; rank: number }, elements: RelativeElements): Omit<FitStatistics, 'rms' | 'byObserver'> {
   const { measures, solutions } = judgement
   const { chiSquare, residuals, values } = solutions[0]!.solution
   const { used } = measures
@@ -96,6 +97,8 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number },
     reducedChiSquare: degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null,
     conditionNumber: errors.conditionNumber < Infinity ? errors.conditionNumber : null,
     errorBasis: measures.basis,
+    rank: errors.rank,
+    ...estimatedSigma(measures),
     arc: relativeArc(elements, used[0]!.epochYr, used[used.length - 1]!.epochYr),
   }
 }

@@ -12,6 +12,8 @@ export interface CovarianceEstimate {
   matrix: number[][] | null
   /** Largest over smallest singular value of the column-scaled Jacobian; Infinity where singular. */
   conditionNumber: number
+  /** Singular values that are more than rounding. */
+  rank: number
 }
 
 /** Beyond this ratio of singular values the smallest is rounding. */
@@ -31,7 +33,8 @@ export function covarianceOf(system: TallSystem): CovarianceEstimate {
   const singular = decomposition.diagonal
   const smallest = singular[p - 1]!
   const conditionNumber = smallest > 0 ? singular[0]! / smallest : Infinity
-  if (!(conditionNumber < SINGULAR_BEYOND)) return { matrix: null, conditionNumber }
+  const rank = singular.filter((value) => value * SINGULAR_BEYOND > singular[0]!).length
+  if (!(conditionNumber < SINGULAR_BEYOND)) return { matrix: null, conditionNumber, rank }
   const right = decomposition.rightSingularVectors
   const matrix: number[][] = []
   for (let i = 0; i < p; i++) {
@@ -44,5 +47,5 @@ export function covarianceOf(system: TallSystem): CovarianceEstimate {
     matrix.push(row)
   }
   for (let i = 0; i < p; i++) for (let j = 0; j < i; j++) matrix[i]![j] = matrix[j]![i]!
-  return { matrix, conditionNumber }
+  return { matrix, conditionNumber, rank }
 }
