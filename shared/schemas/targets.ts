@@ -9,9 +9,9 @@ export const kindSchema = z.enum(KINDS)
 export const createProgrammeSchema = z.object({
   name: z.string().trim().min(1).max(120),
   description: z.string().trim().max(2000).default(''),
-  leastMeasures: z.number().int().min(1).max(10000).default(8),
-  leastObservers: z.number().int().min(1).max(100).default(1),
-  leastArcTurns: z.number().min(0).max(10).default(0),
+  leastMeasures: z.number('a whole number').int('a whole number').min(1).max(10000).default(8),
+  leastObservers: z.number('a whole number').int('a whole number').min(1).max(100).default(1),
+  leastArcTurns: z.number('a number').min(0).max(10).default(0),
 })
 
 export const createTargetSchema = z.object({
@@ -22,7 +22,7 @@ export const createTargetSchema = z.object({
   componentA: z.string().trim().max(40).nullish(),
   componentB: z.string().trim().max(40).nullish(),
   radiusUnit: z.string().trim().min(1).max(20).nullish(),
-  diameterScaleArcmin: z.number().positive().max(1e6).nullish(),
+  diameterScaleArcmin: z.number('a number above zero').positive('a number above zero').max(1e6).nullish(),
   caution: z.enum(['none', 'sun']).default('none'),
   remarks: z.string().trim().max(2000).default(''),
 })
