@@ -1,11 +1,10 @@
-import { useTheme } from './useTheme'
+import { useMutationObserver } from '@vueuse/core'
 
 const NAMES = ['paper', 'sheet', 'ink', 'ink2', 'rule', 'grid', 'orbit', 'mark', 'band', 'o0', 'o1', 'o2', 'o3', 'o4'] as const
 export type PlotColours = Record<(typeof NAMES)[number], string>
 
-/** The theme's colours as values, for drawings that cannot use CSS variables; null until the page is mounted, anew on a change of theme. */
+/** The theme's colours as values, for drawings that cannot use CSS variables; null until the page is mounted, read anew when the theme on the page changes. */
 export function usePlotColours() {
-  const { theme } = useTheme()
   const colours = shallowRef<PlotColours | null>(null)
 
   function read() {
@@ -17,7 +16,10 @@ export function usePlotColours() {
     probe.remove()
   }
 
-  onMounted(read)
-  watch(theme, () => nextTick(read), { flush: 'post' })
+  onMounted(() => {
+    read()
+    // The attribute follows the choice a moment later: the page's colours are read when they are there.
+    useMutationObserver(document.documentElement, read, { attributes: true, attributeFilter: ['data-theme'] })
+  })
   return colours
 }

@@ -15,6 +15,7 @@ declare module 'plotly.js-cartesian-dist-min' {
     pointIndex: number
   }
   export interface PlotElement extends HTMLElement {
+    removeAllListeners: (event: 'plotly_click') => void
     on: (event: 'plotly_click', listener: (event: { points: PlotPoint[] }) => void) => void
   }
 
