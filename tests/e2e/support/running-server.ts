@@ -3,10 +3,10 @@ import type { ChildProcess } from 'node:child_process'
 import { mkdtempSync, readFileSync, rmSync, openSync } from 'node:fs'
 import { createServer } from 'node:net'
 import { tmpdir } from 'node:os'
-import { join } from 'node:path'
-import { fileURLToPath } from 'node:url'
+import { join, resolve } from 'node:path'
 
-const ENTRY = fileURLToPath(new URL('../../../.output/server/index.mjs', import.meta.url))
+/** npm and vitest both run in the project's root. */
+const ENTRY = resolve('.output/server/index.mjs')
 
 export interface RunningServer {
   origin: string
