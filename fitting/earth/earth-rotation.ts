@@ -89,11 +89,11 @@ export function toIcrsAxes(orientation: EarthOrientation, vector: Float64Array):
 
 const angle = new Float64Array(2)
 
-/** Components on axes turned by an angle about x (of y and z, from = 1) or about z (of x and y, from = 0), the sense being that of −angle. */
+/** Components on axes turned by an angle about x (y and z change: from = 1) or about z (x and y change: from = 0). */
 function turn(vector: Float64Array, from: number, angleRad: number): void {
   sinCosInto(angleRad, angle)
   const first = vector[from]!
   const second = vector[from + 1]!
-  vector[from] = angle[1]! * first - angle[0]! * second
-  vector[from + 1] = angle[0]! * first + angle[1]! * second
+  vector[from] = angle[1]! * first + angle[0]! * second
+  vector[from + 1] = angle[1]! * second - angle[0]! * first
 }
