@@ -4,5 +4,6 @@ export { earthHeliocentric, EARTH_SERIES_YEARS, sunBarycentric, sunBarycentricVe
 export { earthOrientation, earthRotationAngleRad, type EarthOrientation, greenwichMeanSiderealRad, toIcrsAxes } from './earth-rotation'
 export { eclipticFromEquatorial, equatorialFromEcliptic } from './ecliptic'
 export { observerHeliocentric, type ObserverPlace } from './observer'
+export { observerWarnings } from './observer-warnings'
 export { type Planet, planetHeliocentric, PLANETS, SUN_OVER_PLANET_MASS } from './planets'
 export { type Ellipsoid, type GeodeticPlace, type ParallaxPlace, parallaxPlace, stationOfDateInto, type StationPlace, stationVector, WGS84 } from './station'

@@ -1,7 +1,7 @@
 /**
  * UTC to TT: TT = TAI + 32.184 s, TAI − UTC whole seconds since 1972; before that TT = UT + ΔT by table.
  *
- * Source: IERS Bulletin C and its list of leap seconds (the list of 2025 July, valid to 2026 June 28).
+ * Source: IERS Bulletin C and its list of leap seconds (the list of 2026 July, valid to 2027 June 28).
  */
 import { jdFromCalendar } from './calendar'
 import { DELTA_T_YEARS, deltaTSeconds } from './delta-t'
@@ -22,8 +22,8 @@ const LEAP_SECONDS: readonly (readonly [number, number, number])[] = [
 
 const steps = LEAP_SECONDS.map(([year, month, seconds]) => ({ jdUtc: jdFromCalendar({ year, month, day: 1 }), seconds }))
 
-/** Julian date (UTC) after which a later leap second may be missing from the table: 2026 June 28. */
-export const LEAP_SECONDS_EXPIRE_JD = 2461219.5
+/** Julian date (UTC) after which a later leap second may be missing from the table: 2027 June 28. */
+export const LEAP_SECONDS_EXPIRE_JD = 2461584.5
 
 /**
  * TAI − UTC.
