@@ -3,7 +3,7 @@ import { atan2, hypot, RAD } from '../elementary'
 import { linePath, stillPath } from '../models/relative-line'
 import { rowsOf, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
-import { settlePath, type SettledPath } from '../search/settle-path'
+import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
 import type { FitResult, FitStatistics } from '../types'
 import { elementOf, errorScale, quadraticForm, type Quantity } from '../uncertainty/error-scale'
@@ -62,7 +62,8 @@ export function fitMotion(request: RelativeRequest, prepared: SkyMeasures): FitR
   const { model, names, path, start } = modelOf(request, prepared, referenceEpochYr)
   const rowCount = used.reduce((sum, measure) => sum + rowsOf(measure), 0)
   if (rowCount < names.length) refuse('too-few-measures', `This motion has ${names.length} unknowns; ${rowCount} coordinates are used.`, 'Add measures.')
-  const first = settlePath(path, used, start)
+  const first = settleStarts(path, used, [start], () => undefined)[0]
+  if (first === undefined) refuse('no-orbit-found', 'The motion begins at the primary itself, where a position angle has no meaning.', 'Look for mistyped values among the measures.')
   const measures = withEstimatedErrors(prepared, first)
   const settled = measures === prepared ? first : settlePath(path, measures.used, first.solution.values)
   request.report('polishing', 1)

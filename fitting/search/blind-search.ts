@@ -9,7 +9,6 @@ import { ProjectedOrbit } from './projected-orbit'
 import { localMinima, scan, scanPeriods } from './scan'
 import { chainedSigns, searchPoints } from './search-points'
 
-/** Minima of the scan that are polished, at most. */
 const POLISHED_AT_MOST = 24
 const SHORT_POLISH_STEPS = 6
 const LONG_POLISH_STEPS = 60
@@ -24,6 +23,8 @@ export interface SearchRequest {
   shortestPeriodYr: number
   /** How far above the best χ² a minimum is still kept, in units of χ². */
   keepWithin: (bestChiSquare: number) => number
+  /** Minima of the scan that are polished, at most; 24 where left out. */
+  polishedAtMost?: number
   onProgress: (part: number) => void
 }
 
@@ -44,7 +45,7 @@ function searchWithSigns(request: SearchRequest, signs: Int8Array): Polished[] {
   const floorYr = Math.max(request.shortestPeriodYr, request.spanYr / SHORTEST_SPAN_PART)
   const cells = scan(points, request.referenceEpochYr, scanPeriods(request.spanYr, floorYr), (part) => request.onProgress(part * 0.7))
   const orbit = new ProjectedOrbit(points, request.referenceEpochYr)
-  const roughly = localMinima(cells).slice(0, POLISHED_AT_MOST)
+  const roughly = localMinima(cells).slice(0, request.polishedAtMost ?? POLISHED_AT_MOST)
     .map((cell) => polish(orbit, startOf(cell), SHORT_POLISH_STEPS, 1e-3))
     .sort(byChiSquare)
   request.onProgress(0.85)

@@ -20,6 +20,8 @@ const HANDFUL = 9
 const HANDFULS_AS_STATED = 40
 const HANDFULS_FOLLOWING = 10
 const MINIMA_EACH = 2
+/** Minima polished in each part; there are many parts. */
+const POLISHED_EACH = 10
 const POLISHED_AT_MOST = 16
 const REWEIGHTINGS = 9
 /** Rounds that weigh by s/d, which pulls in from further away, before the biweight. */
@@ -140,7 +142,7 @@ export function searchRobustly(request: SearchRequest, seed: number): RobustMini
   const following = turned(measures, chainedSigns(asAmbiguous(measures)))
   const parts = [...partsOf(measures, HANDFULS_AS_STATED, random), ...partsOf(following, HANDFULS_FOLLOWING, random)]
   const found = parts.flatMap((part, k) => {
-    const minima = searchRelative({ ...request, measures: part, onProgress: () => undefined }).slice(0, MINIMA_EACH)
+    const minima = searchRelative({ ...request, measures: part, polishedAtMost: POLISHED_EACH, onProgress: () => undefined }).slice(0, MINIMA_EACH)
     request.onProgress((k + 1) / parts.length)
     return minima.map((minimum) => asTurnedBest(points, referenceEpochYr, minimum.values))
   })

@@ -7,7 +7,7 @@
 import { curvedLinePath } from '../models/curved-line'
 import { linePath } from '../models/relative-line'
 import type { SkyMeasure, SkyMeasures } from '../models/sky-measure'
-import { settlePath, type SettledPath } from '../search/settle-path'
+import { settleStarts, type SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
 import { median } from '../solve/median'
 import { cos, sin } from '../elementary'
@@ -54,11 +54,12 @@ export function lineStart(used: readonly SkyMeasure[], referenceEpochYr: number)
  * Fits straight motion.
  * @param measures prepared measures.
  * @param referenceEpochYr t₀, Julian year.
- * @returns the line; null where no measure has both coordinates.
+ * @returns the line; null where no measure has both coordinates, or the line begins where a direction is not defined.
  */
 export function fitLine(measures: SkyMeasures, referenceEpochYr: number): SettledPath | null {
   const start = lineStart(measures.used, referenceEpochYr)
-  return start === null ? null : settlePath(linePath(referenceEpochYr), measures.used, start)
+  if (start === null) return null
+  return settleStarts(linePath(referenceEpochYr), measures.used, [start], () => undefined)[0] ?? null
 }
 
 /**
@@ -75,7 +76,9 @@ export function straightnessOf(measures: SkyMeasures, referenceEpochYr: number):
   const { used, basis } = measures
   const spanYr = used[used.length - 1]!.epochYr - used[0]!.epochYr
   const path = curvedLinePath({ x0, y0, xDot, yDot, referenceEpochYr, spanYr })
-  const { solution } = settlePath(path, used, [x0, y0, xDot, yDot, 0])
+  const settled = settleStarts(path, used, [[x0, y0, xDot, yDot, 0]], () => undefined)[0]
+  if (settled === undefined) return null
+  const { solution } = settled
   const rows = solution.residuals.length
   const { matrix } = covarianceOf({ rows, columns: 5, jacobian: solution.jacobian, residuals: solution.residuals })
   const degrees = rows - 5
