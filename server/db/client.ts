@@ -2,6 +2,7 @@ import Sqlite from 'better-sqlite3'
 import { Kysely, SqliteAdapter, SqliteDialect, SqliteDriver, CompiledQuery } from 'kysely'
 import type { DatabaseConnection, DialectAdapter, Driver, SqliteDialectConfig, Transaction } from 'kysely'
 import type { Database } from './schema'
+import { withStatementCache } from './statement-cache'
 import { isInTransaction } from './transaction'
 
 export type Db = Kysely<Database>
@@ -67,7 +68,7 @@ export function openConnection(file: string, { isReadOnly = false, foreignKeys =
     database.pragma('synchronous = FULL')
     database.pragma(`foreign_keys = ${foreignKeys ? 'ON' : 'OFF'}`)
   }
-  return new Kysely<Database>({ dialect: new AppSqliteDialect({ database }) })
+  return new Kysely<Database>({ dialect: new AppSqliteDialect({ database: withStatementCache(database) }) })
 }
 
 /** Opens the write connection first, since a read-only one cannot create the file or its WAL. */

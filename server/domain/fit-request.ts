@@ -1,6 +1,8 @@
 import type { FitRequest, FitSettings, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
 import type { ParsedRow } from '../../shared/intake/parsed-row'
 import { toFitMeasure } from '../../shared/intake/to-fit-measure'
+import { mapInTurns } from '../../shared/turns/turns'
+import { canonicalJson } from './canonical-json'
 
 /** One seed for every fit of record, kept in its request: the same request repeated gives the same bytes. */
 export const FIT_SEED = 1
@@ -34,13 +36,22 @@ export function fitRole(row: ParsedRow, isSetAside: boolean): 'used' | 'set-asid
  */
 export function buildFitRequest(target: FittedTarget, measures: readonly StandingMeasure[], options: RequestOptions): FitRequest {
   const settings = settingsOf(target, options)
-  const asked = measures.map(({ id, observer, row }) => {
-    const measure = toFitMeasure(row, id, observer)
-    return options.setAside.has(id) ? { ...measure, setAside: true } : measure
-  })
+  const asked = measures.map(measure => askedMeasure(measure, options))
   if (target.kind === 'plane') return { kind: 'plane', measures: asked as PlaneMeasure[], settings }
   if (target.kind === 'relative') return { kind: 'relative', measures: asked as RelativeMeasure[], settings }
   throw new RangeError('a target of the kind equatorial cannot have measures yet')
+}
+
+/** The canonical JSON of that request, written measure by measure and in slices: of ten thousand it takes a while. */
+export async function fitRequestText(target: FittedTarget, measures: readonly StandingMeasure[], options: RequestOptions): Promise<string> {
+  const { kind, settings } = buildFitRequest(target, [], options)
+  const asked = await mapInTurns(measures, measure => canonicalJson(askedMeasure(measure, options)))
+  return `{"kind":${canonicalJson(kind)},"measures":[${asked.join(',')}],"settings":${canonicalJson(settings)}}`
+}
+
+function askedMeasure({ id, observer, row }: StandingMeasure, { setAside }: RequestOptions): RelativeMeasure | PlaneMeasure {
+  const measure = toFitMeasure(row, id, observer)
+  return setAside.has(id) ? { ...measure, setAside: true } : measure
 }
 
 function settingsOf(target: FittedTarget, { model }: RequestOptions): FitSettings {

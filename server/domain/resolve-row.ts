@@ -62,29 +62,37 @@ export function measureKey(row: ParsedRow, around: Pick<Surroundings, 'ownObserv
   return duplicateKey(row, row.observerName ?? around.ownObserverName)
 }
 
+/** A row with the target it belongs to and the key of its measure; null where it has none or cannot be read. */
+export interface PlacedRow {
+  row: DraftRow
+  targetId: string | null
+  key: string | null
+  problems: CellProblem[]
+}
+
+/** Finds where a row belongs, before it is known what the target has already. */
+export function placeRow(row: DraftRow, around: Surroundings): PlacedRow {
+  const found = targetOf(row, around)
+  const targetId = 'target' in found ? found.target.id : null
+  const problems = 'problem' in found && row.parsed ? [found.problem] : []
+  const isReadable = row.parsed && targetId !== null && !hasErrors(row.problems)
+  return { row, targetId, key: isReadable ? measureKey(row.parsed!, around) : null, problems }
+}
+
 /**
- * Decides on every row in order: bad where it cannot be read or has no target, already here where the target has this very
- * measure or an earlier row of the batch brings it, good otherwise.
+ * Decides on the rows of one batch, to be called for each in order: bad where it cannot be read or has no target, already here
+ * where the target has this very measure or an earlier row of the batch brings it, good otherwise.
  */
-export function resolveRows(rows: readonly DraftRow[], around: Surroundings, isKnown: (targetId: string, key: string) => boolean): Map<string, Resolution> {
+export function createRowJudge(isKnown: (targetId: string, key: string) => boolean): (placed: PlacedRow) => Resolution {
   const firstRows = new Map<string, number>()
-  const resolutions = new Map<string, Resolution>()
-  for (const row of rows) {
-    const found = targetOf(row, around)
-    const targetId = 'target' in found ? found.target.id : null
-    const problems = 'problem' in found && row.parsed ? [found.problem] : []
-    if (!row.parsed || targetId === null || hasErrors(row.problems)) {
-      resolutions.set(row.id, { state: 'bad', targetId, problems })
-      continue
-    }
-    const key = measureKey(row.parsed, around)
+  return ({ row, targetId, key, problems }) => {
+    if (targetId === null || key === null) return { state: 'bad', targetId, problems }
     const first = firstRows.get(`${targetId}|${key}`)
     firstRows.set(`${targetId}|${key}`, first ?? row.rowNumber)
-    if (isKnown(targetId, key)) resolutions.set(row.id, { state: 'already-here', targetId, problems: [note(row, ALREADY_HERE)] })
-    else if (first !== undefined) resolutions.set(row.id, { state: 'already-here', targetId, problems: [note(row, ROW_SENTENCES.duplicateOfRow(first))] })
-    else resolutions.set(row.id, { state: 'good', targetId, problems: [] })
+    if (isKnown(targetId, key)) return { state: 'already-here', targetId, problems: [note(row, ALREADY_HERE)] }
+    if (first !== undefined) return { state: 'already-here', targetId, problems: [note(row, ROW_SENTENCES.duplicateOfRow(first))] }
+    return { state: 'good', targetId, problems: [] }
   }
-  return resolutions
 }
 
 const ALREADY_HERE = {

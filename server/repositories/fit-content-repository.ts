@@ -3,6 +3,7 @@ import type { Selectable } from 'kysely'
 import type { FitMeasureTable } from '../db/schema'
 import type { Reads, Tx } from './connection'
 import type { NewFitMeasure } from './fit-repository'
+import { readInPages } from './in-pages'
 import { insertMany } from './insert-many'
 
 export type FitMeasureRecord = Selectable<FitMeasureTable> & { decided_by_name: string | null }
@@ -16,7 +17,7 @@ export interface FitBatchRecord {
   state: string
 }
 
-export async function insertFitMeasures(tx: Tx, rows: readonly NewFitMeasure[]): Promise<void> {
+export async function insertFitMeasures(tx: Tx, rows: Iterable<NewFitMeasure>): Promise<void> {
   await insertMany(tx, 'fit_measure', rows)
 }
 
@@ -26,13 +27,19 @@ export async function insertFitParts(tx: Tx, fitId: string, partIds: readonly st
 }
 
 export async function listFitMeasures(reads: Reads, fitId: string): Promise<FitMeasureRecord[]> {
-  return reads
-    .selectFrom('fit_measure')
-    .leftJoin('person', 'person.id', 'fit_measure.decided_by')
-    .selectAll('fit_measure')
-    .select('person.display_name as decided_by_name')
-    .where('fit_measure.fit_id', '=', fitId)
-    .execute()
+  return readInPages<FitMeasureRecord, string>(
+    ({ after, limit }) => reads
+      .selectFrom('fit_measure')
+      .leftJoin('person', 'person.id', 'fit_measure.decided_by')
+      .selectAll('fit_measure')
+      .select('person.display_name as decided_by_name')
+      .where('fit_measure.fit_id', '=', fitId)
+      .where('fit_measure.measure_id', '>', after ?? '')
+      .orderBy('fit_measure.measure_id')
+      .limit(limit)
+      .execute(),
+    row => row.measure_id,
+  )
 }
 
 /** Measures that a fit brought in: those not in the accepted fit before it. */

@@ -1,5 +1,6 @@
 import type { Kind } from '../../fitting/types'
 import { UPLOAD_CAP_ROWS, type CellProblem } from '../schemas/batches'
+import { runAtOnce, type Steps } from '../turns/turns'
 import { isReadableKind, type ReadableKind } from './columns'
 import { decodeText } from './decode-text'
 import { delimiterWord, delimitersIn, type Delimiter } from './delimiter'
@@ -46,6 +47,11 @@ export interface MeasureReading {
 
 /** Reads a file of measures, as bytes or as pasted text, into rows with everything that is wrong with them. Never throws for what stands in the file. */
 export function readMeasures(input: Uint8Array | string, options: ReadOptions): MeasureReading {
+  return runAtOnce(readMeasuresInSteps(input, options))
+}
+
+/** The same in steps of a few milliseconds, for a server that has others to answer meanwhile. */
+export function* readMeasuresInSteps(input: Uint8Array | string, options: ReadOptions): Steps<MeasureReading> {
   const reading: Reading = { encoding: '', delimiter: '', columns: [], unusedColumns: [], headerRow: 0 }
   const refuse = (...fileProblems: CellProblem[]): MeasureReading => ({ reading, fileProblems, rows: [] })
   const { kind } = options
@@ -56,7 +62,8 @@ export function readMeasures(input: Uint8Array | string, options: ReadOptions): 
   reading.encoding = decoded.encoding
   const notes = decoded.note ? [decoded.note] : []
 
-  const read = readTable(decoded.text)
+  yield
+  const read = yield* readTable(decoded.text)
   if (!read.ok) return refuse(read.problem, ...notes)
   const { table } = read
   const matched = matchColumns(table, kind)
@@ -64,8 +71,12 @@ export function readMeasures(input: Uint8Array | string, options: ReadOptions): 
   const errors = [...matched.errors, ...amountErrors(table)]
   if (errors.length > 0) return refuse(...errors, ...matched.notes, ...notes)
 
-  const rows = table.records.map(record => readRecord(record, { table, matched, kind, now: options.now }))
-  const gathered = gatherNotes(markDuplicates(rows))
+  const rows: MeasureRow[] = []
+  for (const record of table.records) {
+    rows.push(readRecord(record, { table, matched, kind, now: options.now }))
+    yield
+  }
+  const gathered = gatherNotes(yield* markDuplicates(rows))
   return { reading, fileProblems: [...notes, ...matched.notes, ...gathered.fileNotes], rows: gathered.rows }
 }
 

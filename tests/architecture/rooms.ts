@@ -22,7 +22,6 @@ export interface Room {
 }
 
 const ENGINE_TYPES: Permit = { room: 'fitting', only: 'types' }
-const SHARED_TYPES: Permit = { room: 'shared', only: 'types' }
 const DB_TYPES: Permit = { room: 'server/db', only: 'types' }
 const OF_SERVER = [
   'server/routes', 'server/http', 'server/context', 'server/services', 'server/domain', 'server/repositories', 'server/db', 'server/db/migrations',
@@ -99,7 +98,8 @@ export const ROOMS: readonly Room[] = [
     name: 'server/repositories',
     places: ['server/repositories'],
     purpose: 'all SQL',
-    rooms: [DB_TYPES, 'server/errors', SHARED_TYPES, ENGINE_TYPES],
+    // Long lists are read and written in slices, so that others are answered meanwhile.
+    rooms: [DB_TYPES, 'server/errors', { room: 'shared', only: ['createTurns'] }, ENGINE_TYPES],
     packages: ['kysely'],
   },
   {

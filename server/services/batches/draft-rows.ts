@@ -1,10 +1,11 @@
 import { nameKey } from '#shared/intake/name-key'
 import type { ParsedRow } from '#shared/intake/parsed-row'
 import type { CellProblem } from '#shared/schemas/batches'
+import { createTurns, mapInTurns } from '#shared/turns/turns'
 import type { Kind } from '../../../fitting/types'
 import type { Context, Reads, Tx } from '../../context/context'
-import { measureKey, resolveRows, targetOf } from '../../domain/resolve-row'
-import type { DraftRow, KnownTarget, Resolution, Surroundings } from '../../domain/resolve-row'
+import { createRowJudge, placeRow } from '../../domain/resolve-row'
+import type { DraftRow, KnownTarget, PlacedRow, Resolution, Surroundings } from '../../domain/resolve-row'
 import { deleteDraftParts, insertParts, listPartsOfBatch } from '../../repositories/batch-part-repository'
 import type { BatchRecord } from '../../repositories/batch-repository'
 import { listBatchRows, updateRowDecisions } from '../../repositories/batch-row-repository'
@@ -43,7 +44,7 @@ export function frameOf(batch: BatchRecord): BatchFrame {
 
 /** What rows of a batch find around them: targets by every name they use, and who is credited. */
 export async function surroundingsOf(reads: Reads, frame: BatchFrame, rows: readonly DraftRow[]): Promise<Surroundings> {
-  const names = new Set(rows.flatMap(row => (row.parsed?.targetName ? [nameKey(row.parsed.targetName)] : [])))
+  const names = new Set([...new Set(rows.map(row => row.parsed?.targetName ?? null))].flatMap(name => (name ? [nameKey(name)] : [])))
   const target = frame.defaultTargetId === null ? undefined : await findTarget(reads, frame.defaultTargetId)
   const defaultTarget: KnownTarget | null = target ? { id: target.id, name: target.name, kind: target.kind } : null
   return {
@@ -57,28 +58,37 @@ export async function surroundingsOf(reads: Reads, frame: BatchFrame, rows: read
 /** Decides on every row that is not sent, against the targets and measures that are here now. */
 export async function resolveDraftRows(reads: Reads, frame: BatchFrame, rows: readonly DraftRow[]): Promise<Map<string, Resolution>> {
   const around = await surroundingsOf(reads, frame, rows)
+  const placed = await mapInTurns(rows, row => placeRow(row, around))
+  const known = await knownKeys(reads, placed)
+  const judge = createRowJudge((targetId, key) => known.get(targetId)?.has(key) === true)
+  return new Map(await mapInTurns(placed, found => [found.row.id, judge(found)] as const))
+}
+
+/** Of each target the keys of these rows that it has already. */
+async function knownKeys(reads: Reads, placed: readonly PlacedRow[]): Promise<Map<string, Set<string>>> {
   const keysByTarget = new Map<string, string[]>()
-  for (const row of rows) {
-    const found = targetOf(row, around)
-    if (!row.parsed || 'problem' in found) continue
-    const keys = keysByTarget.get(found.target.id) ?? []
-    keys.push(measureKey(row.parsed, around))
-    keysByTarget.set(found.target.id, keys)
+  for (const { targetId, key } of placed) {
+    if (targetId === null || key === null) continue
+    const keys = keysByTarget.get(targetId)
+    if (keys) keys.push(key)
+    else keysByTarget.set(targetId, [key])
   }
   const known = new Map<string, Set<string>>()
   for (const [targetId, keys] of keysByTarget) known.set(targetId, await listKnownDuplicateKeys(reads, targetId, keys))
-  return resolveRows(rows, around, (targetId, key) => known.get(targetId)?.has(key) === true)
+  return known
 }
 
 /** Decides anew on the draft rows of a kept batch, writes what changed, and answers the rows as they are now. */
 export async function settleDraftRows(tx: Tx, ctx: Context, batch: BatchRecord): Promise<BatchRowRecord[]> {
   const rows = await listBatchRows(tx, batch.id)
   const drafts = rows.filter(row => row.state !== 'sent')
-  const resolutions = await resolveDraftRows(tx, frameOf(batch), drafts.map(draftRowOf))
+  const resolutions = await resolveDraftRows(tx, frameOf(batch), await mapInTurns(drafts, draftRowOf))
   const changed: RowDecision[] = []
+  const turns = createTurns()
   for (const row of drafts) {
     const { state, targetId, problems } = resolutions.get(row.id)!
     const text = JSON.stringify({ read: keptProblems(row).read, resolved: problems } satisfies KeptProblems)
+    if (turns.isOver()) await turns.giveWay()
     if (row.state === state && row.target_id === targetId && row.problems === text) continue
     Object.assign(row, { state, target_id: targetId, problems: text })
     changed.push({ id: row.id, state, target_id: targetId, problems: text })

@@ -1,5 +1,6 @@
 import { nameKey } from '#shared/intake/name-key'
 import type { SendOutcome } from '#shared/schemas/batches'
+import { mapInTurns, mapLazily } from '#shared/turns/turns'
 import { withTransaction } from '../../context/context'
 import type { Context, Tx } from '../../context/context'
 import { recordAudit } from '../../audit/record-audit'
@@ -56,12 +57,12 @@ function countRows(rows: readonly BatchRowRecord[], good: readonly BatchRowRecor
 
 async function keepMeasures(tx: Tx, ctx: Context, batch: BatchRecord, rows: readonly BatchRowRecord[]): Promise<void> {
   const own = await ownObserverName(tx, batch.owner_id)
-  const measures = rows.map((row) => {
+  const measures = await mapInTurns(rows, (row) => {
     const parsed = parsedOf(row)!
     return { id: ctx.ids.newId(), row, parsed, observerName: parsed.observerName ?? own }
   })
-  const observerIds = await creditObservers(tx, ctx, { personId: batch.owner_id, names: measures.map(measure => measure.observerName) })
-  await insertMeasures(tx, measures.map(({ id, row, parsed }) => ({
+  const observerIds = await creditObservers(tx, ctx, { personId: batch.owner_id, names: new Set(measures.map(measure => measure.observerName)) })
+  await insertMeasures(tx, mapLazily(measures, ({ id, row, parsed }) => ({
     ...measureColumns(parsed),
     id,
     lineage_id: id,
@@ -73,7 +74,7 @@ async function keepMeasures(tx: Tx, ctx: Context, batch: BatchRecord, rows: read
     author_id: batch.owner_id,
     created_at: ctx.clock.now(),
   })))
-  await insertMeasureObservers(tx, measures.map(({ id, observerName }) => ({ measure_id: id, observer_id: observerIds.get(nameKey(observerName))! })))
+  await insertMeasureObservers(tx, mapLazily(measures, ({ id, observerName }) => ({ measure_id: id, observer_id: observerIds.get(nameKey(observerName))! })))
 }
 
 async function markSent(tx: Tx, ctx: Context, parts: readonly BatchPart[]): Promise<void> {

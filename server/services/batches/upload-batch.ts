@@ -1,8 +1,9 @@
-import { readMeasures } from '#shared/intake/read-measures'
+import { readMeasuresInSteps } from '#shared/intake/read-measures'
 import type { MeasureReading, MeasureRow } from '#shared/intake/read-measures'
 import { ROW_SENTENCES } from '#shared/intake/sentences'
 import { mayUpload } from '#shared/policies/uploading'
 import type { BatchView } from '#shared/schemas/batches'
+import { mapInTurns, mapLazily, runInTurns } from '#shared/turns/turns'
 import type { Kind } from '../../../fitting/types'
 import { withTransaction } from '../../context/context'
 import type { Context } from '../../context/context'
@@ -36,9 +37,9 @@ export async function uploadBatch(ctx: Context, upload: Upload): Promise<BatchVi
   if (!ctx.actor || !mayUpload(ctx.actor)) throw notFound()
   refuseComingKind(upload.kind)
   await refuseUnfitTarget(ctx, upload)
-  const read = readMeasures(upload.bytes, { kind: upload.kind, now: yearOf(ctx.clock.now()) })
+  const read = await runInTurns(readMeasuresInSteps(upload.bytes, { kind: upload.kind, now: yearOf(ctx.clock.now()) }))
   refuseUnreadable(read)
-  const rows = read.rows.map(row => ({ ...draftRow(ctx, row), cells: row.cells }))
+  const rows = await mapInTurns(read.rows, row => ({ ...draftRow(ctx, row), cells: row.cells }))
   const frame = { kind: upload.kind, ownerId: ctx.actor.personId, defaultTargetId: upload.targetId }
   const resolutions = await resolveDraftRows(ctx.reads, frame, rows)
 
@@ -114,7 +115,7 @@ async function keepBatch(ctx: Context, { batchId, upload, read, rows, resolution
       created_at,
       discarded_at: null,
     })
-    await insertBatchRows(tx, rows.map((row) => {
+    await insertBatchRows(tx, mapLazily(rows, (row) => {
       const { state, targetId, problems } = resolutions.get(row.id)!
       return {
         id: row.id,

@@ -1,10 +1,11 @@
 import type { FitSettings } from '../../../fitting/types'
 import type { FitView } from '#shared/schemas/fits'
+import { mapInTurns, mapLazily } from '#shared/turns/turns'
 import { ENGINE_VERSION } from '../../../fitting'
 import type { Context, Tx } from '../../context/context'
 import { recordAudit } from '../../audit/record-audit'
-import { canonicalJson, sha256Hex } from '../../domain/canonical-json'
-import { buildFitRequest, FIT_SEED, fitRole } from '../../domain/fit-request'
+import { sha256Hex } from '../../domain/canonical-json'
+import { FIT_SEED, fitRequestText, fitRole } from '../../domain/fit-request'
 import type { StandingMeasure } from '../../domain/fit-request'
 import { SETTLED_FIT_STATES } from '../../domain/fit-state'
 import { enqueueJob } from '../../jobs/queue/enqueue-job'
@@ -52,11 +53,11 @@ export interface QueuedFit {
  * to the new fit, so that one ruling settles them together.
  */
 export async function queueFit(tx: Tx, ctx: Context, order: FitOrder): Promise<QueuedFit | null> {
-  const measures = (await listStandingMeasures(tx, order.target.id)).map(standingMeasure)
+  const measures = await mapInTurns(await listStandingMeasures(tx, order.target.id), standingMeasure)
   if (measures.length === 0) return null
   const accepted = (await listFitsInStates(tx, order.target.id, SETTLED_FIT_STATES))[0] ?? null
   const setAside = order.setAside ?? (accepted ? await setAsidesOf(tx, accepted.id) : new Map<string, SetAside>())
-  const request = canonicalJson(buildFitRequest(order.target, measures, { setAside: new Set(setAside.keys()), model: order.model }))
+  const request = await fitRequestText(order.target, measures, { setAside: new Set(setAside.keys()), model: order.model })
   const input = { targetId: order.target.id, inputHash: sha256Hex(request), engineVersion: ENGINE_VERSION }
 
   // A fit that only failed because the program broke down says nothing about its request, which may be tried again.
@@ -127,7 +128,7 @@ interface FitContent {
 
 async function linkContent(tx: Tx, { fitId, targetId, measures, setAside }: FitContent): Promise<void> {
   const accepted = await listAcceptedMeasureIds(tx, targetId)
-  await insertFitMeasures(tx, measures.map((measure) => {
+  await insertFitMeasures(tx, mapLazily(measures, (measure) => {
     const decision = setAside.get(measure.id)
     return {
       fit_id: fitId,

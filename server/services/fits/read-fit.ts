@@ -2,6 +2,7 @@ import { mayPublish } from '#shared/policies/coordinating'
 import { mayReadSentWork } from '#shared/policies/reading'
 import { isHinderedByOwnWork, mayRule } from '#shared/policies/ruling'
 import type { FitMeasureView, FitView } from '#shared/schemas/fits'
+import { mapInTurns } from '#shared/turns/turns'
 import type { FitResult } from '../../../fitting/types'
 import type { Context, Reads } from '../../context/context'
 import { changeInSigma } from '../../domain/fit-change'
@@ -57,7 +58,7 @@ export async function viewFit(ctx: Context, reads: Reads, fitId: string): Promis
 async function fitMeasures(reads: Reads, fitId: string): Promise<FitMeasureView[]> {
   const parts = new Map((await listFitMeasures(reads, fitId)).map(part => [part.measure_id, part]))
   const measures = await listMeasuresByIds(reads, [...parts.keys()])
-  return measures.map(measure => fitMeasureView(measure, parts.get(measure.id)!))
+  return mapInTurns(measures, measure => fitMeasureView(measure, parts.get(measure.id)!))
 }
 
 async function jobOf(reads: Reads, fit: FitRecord): Promise<FitView['job']> {

@@ -8,7 +8,7 @@ import { inputInvalid, notFound, wrongState } from '../../errors/app-error'
 import { listFitMeasures } from '../../repositories/fit-content-repository'
 import { getFit, listFitsInStates } from '../../repositories/fit-repository'
 import type { FitRecord } from '../../repositories/fit-repository'
-import { listStandingMeasures } from '../../repositories/measure-repository'
+import { listStandingMeasureIds } from '../../repositories/measure-repository'
 import { findTarget } from '../../repositories/target-repository'
 import { SETTLED_FIT_STATES } from '../../domain/fit-state'
 import { fitSummary } from './fit-summary'
@@ -58,7 +58,7 @@ interface Decision {
 
 /** Each set-aside with its reason and who decided: whoever gave this very reason first, else the one who asks now. */
 async function decide(tx: Tx, ctx: Context, { targetId, wish, before }: Decision): Promise<Map<string, SetAside>> {
-  const standing = new Set((await listStandingMeasures(tx, targetId)).map(measure => measure.id))
+  const standing = new Set(await listStandingMeasureIds(tx, targetId))
   const unknown = wish.setAside.flatMap(({ measureId }, i) => (standing.has(measureId) ? [] : [`setAside.${i}.measureId`]))
   if (unknown.length > 0) throw inputInvalid(unknown.map(path => ({ path, reason: 'is no standing measure of this target' })))
   return new Map(wish.setAside.map(({ measureId, reason }) => {

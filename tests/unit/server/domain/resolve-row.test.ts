@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { measureKey, resolveRows } from '../../../../server/domain/resolve-row'
+import { createRowJudge, measureKey, placeRow } from '../../../../server/domain/resolve-row'
 import type { DraftRow, KnownTarget, Surroundings } from '../../../../server/domain/resolve-row'
 import { readRow } from '../../../../shared/intake/read-row'
 
@@ -16,8 +16,10 @@ function row(rowNumber: number, cells: Record<string, string>): DraftRow {
   const { parsed, problems } = readRow({ epoch: '2020.5', theta_deg: '40', rho_arcsec: '1.2', ...cells }, 'relative', { rowNumber })
   return { id: `row ${rowNumber}`, rowNumber, parsed, problems }
 }
-const resolve = (rows: DraftRow[], around = AROUND, isKnown: (targetId: string, key: string) => boolean = () => false) =>
-  rows.map(found => resolveRows(rows, around, isKnown).get(found.id)!)
+function resolve(rows: DraftRow[], around = AROUND, isKnown: (targetId: string, key: string) => boolean = () => false) {
+  const judge = createRowJudge(isKnown)
+  return rows.map(found => judge(placeRow(found, around)))
+}
 
 describe('a row of a draft', () => {
   it('belongs to the target it names, however the name is written, else to the one chosen for the file', () => {
