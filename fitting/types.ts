@@ -72,6 +72,33 @@ export interface PlaneMeasure extends MeasureBase {
   epochYr?: number
 }
 
+/** Where an equatorial measure was made: published parallax constants (equatorial radii), or a geodetic place on WGS 84. East positive. */
+export type MeasureSite =
+  | { longitudeEastDeg: number; rhoCosPhi: number; rhoSinPhi: number }
+  | { longitudeEastDeg: number; latitudeDeg: number; heightM: number }
+
+/** A direction on the axes of the ICRS as measured against catalogue stars (no aberration taken off, diurnal parallax left in). */
+export interface EquatorialMeasure extends MeasureBase {
+  /** Middle of the exposure, JD of UTC (before 1972 of UT), 1620 to 2500. */
+  jdUtc: number
+  raRad: number
+  /** −π/2 to π/2. */
+  decRad: number
+  site: MeasureSite
+  /** σ of Δα cos δ and of δ, arcsec. */
+  sigmaRaCosDecArcsec?: number
+  sigmaDecArcsec?: number
+  /** Correlation of the two, in (−1, 1). */
+  correlation?: number
+  /** σ of the time, s: enters along the motion. */
+  sigmaTimeS?: number
+  /** Total or nuclear brightness in `band`, mag. */
+  magnitude?: number
+  band?: string
+  starCatalogue?: string
+  tracklet?: string
+}
+
 export interface FitSettings {
   model?: Model
   loss?: 'squares' | 'huber' | 'biweight'
@@ -98,7 +125,7 @@ export interface FitStart {
 export type FitRequest =
   | { kind: 'relative'; measures: RelativeMeasure[]; settings?: FitSettings; start?: FitStart }
   | { kind: 'plane'; measures: PlaneMeasure[]; settings?: FitSettings; start?: FitStart }
-  | { kind: 'equatorial'; measures: MeasureBase[]; settings?: FitSettings; start?: FitStart }
+  | { kind: 'equatorial'; measures: EquatorialMeasure[]; settings?: FitSettings; start?: FitStart }
 
 export const PROGRESS_STAGES = ['reading', 'searching', 'polishing', 'judging'] as const
 export interface Progress {
@@ -161,9 +188,10 @@ export interface Constants {
 export interface Residual {
   id: string
   status: 'used' | 'set-aside' | 'not-fitted'
-  /** By coordinate; the keys of the kind: thetaDeg, rhoArcsec, eastArcsec, northArcsec | r, diameterArcmin. */
+  /** By coordinate; the keys of the kind: thetaDeg, rhoArcsec, eastArcsec, northArcsec | r, diameterArcmin | raDeg, decDeg, distanceAu, sunDistanceAu. */
   computed: Record<string, number>
-  /** Observed minus computed; null for a coordinate that was not measured. relative adds acrossArcsec (ρΔθ) and alongArcsec (Δρ). */
+  /** Observed minus computed; null for a coordinate that was not measured. relative adds acrossArcsec (ρΔθ) and alongArcsec (Δρ);
+   *  equatorial has raCosDecArcsec and decArcsec, and the same along and across the motion on the sky. */
   observedMinusComputed: Record<string, number | null>
   /** Whitened length √Σr² in σ, and the whitened rows themselves. */
   normalised: number | null
@@ -188,13 +216,39 @@ export interface Proposal {
 
 /** Regular parameters: what predict and a refit work from. */
 export interface FitState {
-  model: Model | 'plane'
+  model: Model | 'plane' | 'sight' | 'parabola'
   names: string[]
   values: number[]
   /** Covariance of values with the errors to publish; null where the problem is singular or exact. */
   covariance: number[][] | null
   /** Reference epoch, Julian year (relative); 0 otherwise. */
   referenceEpochYr: number
+  /** Equatorial: what the parameters are counted from; plain numbers. */
+  reference?: SightReference
+  /** Equatorial: the forces it was fitted with. */
+  forces?: 'sun' | 'planets'
+}
+
+/** Line of sight and the Earth at the epoch of an equatorial state. */
+export interface SightReference {
+  /** JD of TT of the state. */
+  jdTt: number
+  /** The Earth then: place (au) and velocity (au/d), equatorial axes of the ICRS. */
+  earth: number[]
+  /** Unit vector of the line of sight. */
+  direction: readonly [number, number, number]
+  /** Unit vector of the direction of motion, for a held parabola only. */
+  motion?: readonly [number, number, number]
+}
+
+/** How far a motion without perturbations can be believed. */
+export interface HonestArc {
+  /** Days from the first to the last used measure. */
+  days: number
+  /** Arc in days up to which a conic holds within the errors of measures; 0 where it does not hold at all. */
+  honestUntilDays: number
+  standing: 'honest' | 'strained' | 'needs-perturbations' | 'perturbed'
+  statement: string
 }
 
 export interface FitStatistics {
@@ -237,6 +291,11 @@ export interface FitResult {
   /** relative: 'ambiguous' without velocities; equinox of Ω. */
   nodeStatus?: 'ambiguous' | 'ascending'
   nodeEquinox?: number
+  /** equatorial: epoch of the osculating elements, JD of TT, and the frame of angles. */
+  epochOfElements?: number
+  frame?: string
+  /** equatorial: over which arc the motion fitted is honest. */
+  honestArc?: HonestArc
   covariance: { names: string[]; matrix: number[][] } | null
   constants: Constants | null
   statistics: FitStatistics
@@ -250,7 +309,7 @@ export interface FitResult {
 export type FitOutcome = { ok: true; result: FitResult } | { ok: false; refusal: Refusal }
 
 export interface Prediction {
-  /** relative: Julian year; plane: φ in degrees. */
+  /** relative: Julian year; plane: φ in degrees; equatorial: JD of TT. */
   at: number
   values: Record<string, number>
   /** Same keys as values; null without covariance. */
