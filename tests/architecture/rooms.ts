@@ -150,7 +150,8 @@ export const ROOMS: readonly Room[] = [
     places: ['server/jobs/workers'],
     purpose: 'the only caller of fitOrbit on the server; never touches the database',
     rooms: ['fitting'],
-    packages: ['node:worker_threads'],
+    // Lowering the thread's own priority is all it asks of the system.
+    packages: ['node:worker_threads', { room: 'node:os', only: ['constants', 'setPriority'] }],
   },
   {
     name: 'server/mail/outbox',

@@ -8,8 +8,8 @@ import type { JobTools } from '../../services/jobs/job-tools'
 const TIME_LIMIT_MS = 10 * 60_000
 const MEMORY_LIMIT_MB = 512
 
-/** Fits beside each other: one core is left to answer requests. */
-export const FITS_AT_ONCE = Math.max(1, Math.min(4, availableParallelism() - 1))
+/** Fits beside each other: two at least, so that a long one never keeps the others waiting; else one core is left to answer requests. */
+export const FITS_AT_ONCE = Math.max(2, Math.min(4, availableParallelism() - 1))
 
 export interface FitPool {
   computeFit: JobTools['computeFit']
