@@ -40,17 +40,17 @@ function planeRowsAt(state: FitState, sigma: Extract<MeasureSigma, { kind: 'plan
   }
 }
 
-/** C after a measure, row by row: each row is a rank-one update; returns det S with it. */
-function updated(covariance: number[][], rows: readonly Float64Array[]): { covariance: number[][]; determinant: number } {
+/** C after a measure, row by row: each row is a rank-one update of its own s ≥ 1, and det S is their product. */
+function updated(covariance: number[][], rows: readonly Float64Array[]): { covariance: number[][]; information: number } {
   let current = covariance
-  let determinant = 1
+  let information = 0
   for (const row of rows) {
     const carried = current.map((line) => line.reduce((sum, value, j) => sum + value * row[j]!, 0))
-    const s = 1 + carried.reduce((sum, value, j) => sum + value * row[j]!, 0)
-    determinant *= s
+    const s = 1 + Math.max(0, carried.reduce((sum, value, j) => sum + value * row[j]!, 0))
+    information += log(s) / 2
     current = current.map((line, i) => line.map((value, j) => value - (carried[i]! * carried[j]!) / s))
   }
-  return { covariance: current, determinant }
+  return { covariance: current, information }
 }
 
 function quantitiesOf(result: FitResult): Record<string, Quantity> {
@@ -84,6 +84,6 @@ export function gainByEpoch(result: FitResult, at: readonly number[], sigma: Mea
       const variance = quadraticForm(after.covariance, gradient)
       return [name, variance >= 0 && variance < Infinity ? Math.sqrt(variance) : null]
     }))
-    return { at: when, information: log(after.determinant) / 2, sigmasAfter }
+    return { at: when, information: after.information, sigmasAfter }
   })
 }

@@ -3,14 +3,17 @@
  * The scale is taken anew in the first five rounds and then held, so that the rounds converge.
  * Source: Beaton & Tukey 1974, Technometrics 16, 147; iterated reweighting: Holland & Welsch 1977, Comm. Statistics A6, 813.
  */
+import { skyProblem, skyRows } from '../models/relative-problem'
 import { rowsOf, withRobustWeights, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { evaluateRow, rowBuffer, skyRow } from '../models/sky-rows'
 import { biweight, robustScale, trimmedSum, type RobustScale } from '../solve/biweight'
-import { settlePath, settleStarts, type SettledPath } from './settle-path'
+import { solveLeastSquares } from '../solve/levenberg-marquardt'
+import { computedRho, settleStarts, type SettledPath } from './settle-path'
 
 const LARGEST_ROUNDS = 40
 const SCALE_ROUNDS = 5
+const ITERATIONS_EACH = 30
 const WEIGHTS_SETTLED = 1e-7
 
 /**
@@ -54,7 +57,7 @@ export interface RobustlySettled {
  */
 export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: readonly ArrayLike<number>[]): RobustlySettled {
   const { used } = measures
-  let values = betterTurned(path, starts[0]!, used)
+  let values: Float64Array = betterTurned(path, starts[0]!, used)
   let weighted = measures
   let scale: RobustScale = { pair: 1, single: 1 }
   for (let round = 0; round < LARGEST_ROUNDS; round++) {
@@ -63,7 +66,8 @@ export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: rea
     const weights = distances.map((d, i) => biweight(d, rowsOf(used[i]!) === 2 ? scale.pair : scale.single))
     const change = weights.reduce((largest, weight, i) => Math.max(largest, Math.abs(weight - weighted.used[i]!.robustWeight)), 0)
     weighted = withRobustWeights(measures, weights)
-    values = settlePath(path, weighted.used, values).solution.values as Float64Array<ArrayBuffer>
+    const rows = skyRows(weighted.used, computedRho(path, values, weighted.used))
+    values = solveLeastSquares(skyProblem(path, rows), values, { maxIterations: ITERATIONS_EACH }).values
     if (round >= SCALE_ROUNDS && change <= WEIGHTS_SETTLED) break
   }
   return { measures: weighted, solutions: settleStarts(path, weighted.used, [values, ...starts.slice(1)], () => undefined) }
