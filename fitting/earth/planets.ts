@@ -43,6 +43,7 @@ const PERIODIC_UNIT = 1e-7
 /**
  * Heliocentric state of a planet, good enough to perturb: in longitude within 9″ (Mercury to Earth), 26″ (Mars), 78″ (Jupiter), 87″
  * (Saturn, Uranus), 11″ (Neptune) of an integrated ephemeris from 1800 to 2100, half as much again from 1000 to 3000.
+ * The velocity is that of the ellipse of the moment, within 1 % of the slope of the path.
  * @param planet which.
  * @param jdTt JD of TT, d.
  * @param out receives x, y, z (au) and vx, vy, vz (au/d), mean equator and equinox of J2000 (within 0.03″ of the ICRS).
