@@ -22,24 +22,34 @@ export function observerMarks(observers: readonly string[]): ObserverMark[] {
   }))
 }
 
-const OUTLINES: Record<MarkShape, (half: number) => string> = {
-  circle: half => `M${-half} 0a${half} ${half} 0 1 0 ${2 * half} 0a${half} ${half} 0 1 0 ${-2 * half} 0Z`,
-  square: half => box(half * 0.88),
-  triangle: half => `M0 ${-1.22 * half}L${1.16 * half} ${0.84 * half}H${-1.16 * half}Z`,
-  diamond: half => `M0 ${-1.32 * half}L${1.2 * half} 0L0 ${1.32 * half}L${-1.2 * half} 0Z`,
-  cross: half => `M${-half} ${-half}L${half} ${half}M${-half} ${half}L${half} ${-half}`,
-  'turned-triangle': half => `M0 ${1.22 * half}L${1.16 * half} ${-0.84 * half}H${-1.16 * half}Z`,
-  plus: half => `M${-1.2 * half} 0H${1.2 * half}M0 ${-1.2 * half}V${1.2 * half}`,
-  star: half => `M${-1.2 * half} 0H${1.2 * half}M${-0.65 * half} ${-1.1 * half}L${0.65 * half} ${1.1 * half}M${0.65 * half} ${-1.1 * half}L${-0.65 * half} ${1.1 * half}`,
+/** Outlines as relative path commands that begin at the mark's middle; h is the half-size in pixels. */
+const OUTLINES: Record<MarkShape, (h: number) => (string | number)[]> = {
+  circle: h => ['m', -h, 0, 'a', h, h, 0, 1, 0, 2 * h, 0, 'a', h, h, 0, 1, 0, -2 * h, 0, 'z'],
+  square: h => ['m', -0.88 * h, -0.88 * h, 'h', 1.76 * h, 'v', 1.76 * h, 'h', -1.76 * h, 'z'],
+  triangle: h => ['m', 0, -1.22 * h, 'l', 1.16 * h, 2.06 * h, 'h', -2.32 * h, 'z'],
+  diamond: h => ['m', 0, -1.32 * h, 'l', 1.2 * h, 1.32 * h, 'l', -1.2 * h, 1.32 * h, 'l', -1.2 * h, -1.32 * h, 'z'],
+  cross: h => ['m', -h, -h, 'l', 2 * h, 2 * h, 'm', -2 * h, 0, 'l', 2 * h, -2 * h],
+  'turned-triangle': h => ['m', 0, 1.22 * h, 'l', 1.16 * h, -2.06 * h, 'h', -2.32 * h, 'z'],
+  plus: h => ['m', -1.2 * h, 0, 'h', 2.4 * h, 'm', -1.2 * h, -1.2 * h, 'v', 2.4 * h],
+  star: h => ['m', -1.2 * h, 0, 'h', 2.4 * h, 'm', -1.85 * h, -1.1 * h, 'l', 1.3 * h, 2.2 * h, 'm', 0, -2.2 * h, 'l', -1.3 * h, 2.2 * h],
 }
 
-function box(half: number): string {
-  return `M${-half} ${-half}H${half}V${half}H${-half}Z`
+/** Outline of a mark about a point (the origin where none is given), as an SVG path with `halfPx` pixels from its middle to its edge. */
+export function markPath(shape: MarkShape, halfPx: number, x = 0, y = 0): string {
+  return `M${x} ${y}${outlineOf(shape, halfPx)}`
 }
 
-/** Outline of a mark about (0, 0), as an SVG path with `halfPx` pixels from its middle to its edge. */
-export function markPath(shape: MarkShape, halfPx: number): string {
-  return OUTLINES[shape](halfPx).replace(/-?\d+\.\d{3,}/g, number => String(Math.round(Number(number) * 100) / 100))
+/** A page draws hundreds of marks of few shapes and sizes. */
+const written = new Map<string, string>()
+
+function outlineOf(shape: MarkShape, halfPx: number): string {
+  const key = `${shape} ${halfPx}`
+  const known = written.get(key)
+  if (known !== undefined) return known
+  const commands = OUTLINES[shape](halfPx).map(part => (typeof part === 'number' ? Math.round(part * 100) / 100 : part))
+  const outline = commands.join(' ').replaceAll(/ ?([a-z]) ?/g, '$1')
+  written.set(key, outline)
+  return outline
 }
 
 /** Shapes that are filled; the others are outlines, so that marks on top of each other stay readable. */

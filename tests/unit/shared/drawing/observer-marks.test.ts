@@ -21,11 +21,9 @@ describe('observer marks', () => {
     expect(observerMarks(['b', 'a', 'b']).map(({ observer, measures }) => [observer, measures])).toEqual([['a', 1], ['b', 2]])
   })
 
-  it('outlines every shape within one and a third times its half-size', () => {
-    for (const shape of MARK_SHAPES) {
-      const numbers = markPath(shape, 4).match(/-?\d+(\.\d+)?/g)!.map(Number).filter(value => shape !== 'circle' || Math.abs(value) <= 4)
-      expect(Math.max(...numbers.map(Math.abs)), shape).toBeLessThanOrEqual(4 * 1.34)
-    }
+  it('outlines a mark about its point, the same wherever it stands', () => {
+    expect(markPath('square', 5)).toBe('M0 0m-4.4 -4.4h8.8v8.8h-8.8z')
+    for (const shape of MARK_SHAPES) expect(markPath(shape, 4, 12.5, -3).replace('M12.5 -3', 'M0 0')).toBe(markPath(shape, 4))
   })
 
   it('leaves most shapes open, so that marks on top of each other stay readable', () => {
