@@ -1,10 +1,12 @@
 /**
- * Harmonic terms of the vector barycentre of the solar system to Sun, ecliptic axes of the theory: amplitude (au), phase (rad) and frequency (rad a Julian year),
- * three numbers a term, by power of the time and by component. 628 terms, digits as published.
+ * Harmonic terms of the vector barycentre of the solar system to Sun, ecliptic axes of the theory: amplitude (au), phase (rad) and
+ * frequency (rad a Julian year), three numbers a term, by power of the time and by component. 628 terms, digits as published.
  *
  * Source: the simplified solution of Moisson & Bretagnon 2001, Analytical planetary solution VSOP2000, Celestial Mechanics and Dynamical
  * Astronomy 80, 205, as adapted in eraEpv00 of ERFA 2.0. Copyright (C) 2013-2021, NumFOCUS Foundation. All rights reserved. Derived, with
  * permission, from the SOFA library of the International Astronomical Union. Conditions and disclaimer: LICENSE-ERFA in this folder.
+ *
+ * @license BSD-3-Clause (ERFA)
  */
 
 /** By power of the time (0, 1, 2), then x, y, z. */

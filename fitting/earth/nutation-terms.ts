@@ -5,6 +5,8 @@
  * Source: McCarthy & Luzum 2003, An abridged model of the precession-nutation of the celestial pole, Celestial Mechanics and Dynamical
  * Astronomy 85, 37, as listed in eraNut00b of ERFA 2.0. Copyright (C) 2013-2021, NumFOCUS Foundation. All rights reserved. Derived, with
  * permission, from the SOFA library of the International Astronomical Union. Conditions and disclaimer: LICENSE-ERFA in this folder.
+ *
+ * @license BSD-3-Clause (ERFA)
  */
 export const NUTATION_TERMS: readonly (readonly number[])[] = [
   [0, 0, 0, 0, 1, -172064161, -174666, 33386, 92052331, 9086, 15377],

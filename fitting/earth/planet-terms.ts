@@ -4,6 +4,8 @@
  * Source: Simon et al. 1994, Numerical expressions for precession formulae and mean elements for the Moon and the planets, A&A 282, 663,
  * as listed in eraPlan94 of ERFA 2.0. Copyright (C) 2013-2021, NumFOCUS Foundation. All rights reserved. Derived, with permission, from
  * the SOFA library of the International Astronomical Union. Conditions and disclaimer: LICENSE-ERFA in this folder.
+ *
+ * @license BSD-3-Clause (ERFA)
  */
 import type { Planet } from './planets'
 
