@@ -66,18 +66,17 @@ function overview(reads: Reads) {
   return reads
     .selectFrom('batch')
     .innerJoin('person', 'person.id', 'batch.owner_id')
-    .leftJoin('batch_row', 'batch_row.batch_id', 'batch.id')
     .selectAll('batch')
     .select('person.display_name as owner_name')
+    // Each counted in its index, and only for the batches that are listed.
     .select([
-      sql<number>`count(batch_row.id)`.as('rows'),
-      sql<number>`count(*) FILTER (WHERE batch_row.state = 'good')`.as('good'),
-      sql<number>`count(*) FILTER (WHERE batch_row.state = 'bad')`.as('bad'),
-      sql<number>`count(*) FILTER (WHERE batch_row.state = 'already-here')`.as('already_here'),
-      sql<number>`count(*) FILTER (WHERE batch_row.state = 'sent')`.as('sent'),
+      sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch.id)`.as('rows'),
+      sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch.id AND r.state = 'good')`.as('good'),
+      sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch.id AND r.state = 'bad')`.as('bad'),
+      sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch.id AND r.state = 'already-here')`.as('already_here'),
+      sql<number>`(SELECT count(*) FROM batch_row r WHERE r.batch_id = batch.id AND r.state = 'sent')`.as('sent'),
     ])
     .where('batch.discarded_at', 'is', null)
-    .groupBy('batch.id')
 }
 
 export async function getBatchOverview(reads: Reads, id: string): Promise<BatchOverview> {

