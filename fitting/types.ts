@@ -204,6 +204,7 @@ export interface Residual {
 }
 
 export interface Alternative {
+  /** χ² above that of the orbit given, in units of the reduced χ² where that is above 1; slightly negative where periods fit alike and the longest was given. */
   deltaChiSquare: number
   elements: Record<string, Element>
 }

@@ -3,7 +3,8 @@ import { keplerPath, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import { searchRelative, type SearchRequest } from '../search/blind-search'
 import { searchRobustly } from '../search/robust-search'
-import { settleStarts } from '../search/settle-path'
+import { preferredSolution } from '../search/prefer-longer'
+import { settlePath, settleStarts } from '../search/settle-path'
 import { settleRobustly, type RobustlySettled } from '../search/settle-robustly'
 import type { FitResult, FitSettings, FitStart, RelativeMeasure } from '../types'
 import { withEstimatedErrors } from './estimated-errors'
@@ -80,11 +81,17 @@ function startsOf(request: RelativeRequest, measures: SkyMeasures, middle: Middl
 
 const isRobust = (request: RelativeRequest) => request.settings.loss === 'biweight'
 
-/** Solutions of all starts, best first, with the weights of a robust loss in the measures. */
+/** Solutions of all starts, the one to publish first, with the weights of a robust loss in the measures. */
 function settleAll(request: RelativeRequest, measures: SkyMeasures, starts: ArrayLike<number>[], referenceEpochYr: number): RobustlySettled {
   const path = keplerPath(referenceEpochYr)
-  if (isRobust(request) && starts.length > 0) return settleRobustly(path, measures, starts)
-  return { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
+  const settled = isRobust(request) && starts.length > 0 ? settleRobustly(path, measures, starts)
+    : { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
+  const best = settled.solutions[0]
+  if (best === undefined) return settled
+  const preferred = preferredSolution(settled.solutions, effectiveRows(settled.measures.used) - RELATIVE_KEPLER_NAMES.length)
+  if (preferred === best) return settled
+  const others = settled.solutions.filter((solution) => solution !== preferred)
+  return { measures: settled.measures, solutions: [settlePath(path, settled.measures.used, preferred.solution.values), ...others] }
 }
 
 /**

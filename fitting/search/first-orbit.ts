@@ -22,8 +22,9 @@ const GRID_CANDIDATES = 14
 /** Steps of the first polish, and how many of its results are followed to the end. */
 const FIRST_POLISH = 30
 const FOLLOWED = 5
-/** Two solutions are one where no parameter differs by more than this part (ln ρ: by itself). */
+/** Two solutions are one where no parameter differs by more than this part of it, or of the second number where it is smaller. */
 const SAME_WITHIN = 1e-4
+const USUAL = 0.01
 
 
 /** At most `count` sights spread evenly in time: the nearest to each of `count` even times. */
@@ -75,15 +76,14 @@ function stateAt(state: Float64Array, jdTt: number, epochJdTt: number): Float64A
 }
 
 /**
- * Are two sets of parameters the same orbit?
- * @param a six parameters.
- * @param b six parameters.
- * @returns true within 1e-4 of ln ρ and of the rates in units of the Earth's.
+ * Are two sets of six numbers the same orbit?
+ * @param a parameters, or a state.
+ * @param b the same of the other.
+ * @returns true where none differs by more than 1e-4 of the larger, or of what is usual at 1 au.
  */
 export function isSameOrbit(a: ArrayLike<number>, b: ArrayLike<number>): boolean {
   for (let j = 0; j < a.length; j++) {
-    const scale = Math.max(Math.abs(a[j]!), Math.abs(b[j]!), a.length === 6 && (j === 2 || j === 3 || j === 5) ? 0.0172 : 1)
-    if (Math.abs(a[j]! - b[j]!) > SAME_WITHIN * scale) return false
+    if (Math.abs(a[j]! - b[j]!) > SAME_WITHIN * Math.max(Math.abs(a[j]!), Math.abs(b[j]!), USUAL)) return false
   }
   return true
 }

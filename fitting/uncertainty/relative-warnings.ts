@@ -12,6 +12,8 @@ const LARGE_SCATTER = 2
 const OUTLIER_SIGMA = 6
 /** One-sided probability of so large a curvature on straight motion. */
 const STRAIGHT_ABOVE = 0.05
+/** Δχ² within which two orbits fit just as well. */
+const EQUAL_WITHIN = 0.1
 
 export interface RelativeFindings {
   elements: RelativeElements
@@ -40,6 +42,14 @@ function aboutAngles({ elements, errors, conic }: RelativeFindings): string[] {
   else if (conic.circleExcluded === false) warnings.push('A circle is not excluded: argument of periastron and time of periastron are poorly known; their combination, the phase, is not.')
   if (Math.abs(cos(elements.inclinationRad)) < EDGE_ON_BELOW) warnings.push('The orbit is seen nearly edge on (|cos i| below 0.05): measures are not carried back into its plane.')
   return warnings
+}
+
+function aboutAlternatives({ alternatives, elements }: RelativeFindings): string[] {
+  if (alternatives.length === 0) return []
+  const shorter = alternatives.filter(({ deltaChiSquare, elements: other }) => deltaChiSquare <= EQUAL_WITHIN && other.period!.value < elements.periodYr)
+  const known = `${alternatives.length === 1 ? 'Another orbit fits' : `${alternatives.length} other orbits fit`} almost as well (Δχ² below 9): see the alternatives before publishing.`
+  if (shorter.length === 0) return [known]
+  return [known, `${shorter.length === 1 ? 'A shorter period fits' : `${shorter.length} shorter periods fit`} just as well, as happens with measures at equal intervals; the longest is given.`]
 }
 
 /** Without a significant curvature the line is what the measures show. */
@@ -89,9 +99,5 @@ function aboutScatter({ statistics, residuals }: RelativeFindings): string[] {
  * @returns sentences, most consequential first.
  */
 export function relativeWarnings(findings: RelativeFindings): string[] {
-  const { alternatives } = findings
-  const others = alternatives.length === 0 ? [] : [
-    `${alternatives.length === 1 ? 'Another orbit fits' : `${alternatives.length} other orbits fit`} almost as well (Δχ² below 9): see the alternatives before publishing.`,
-  ]
-  return [...others, ...aboutArc(findings), ...aboutAngles(findings), ...aboutScatter(findings)]
+  return [...aboutAlternatives(findings), ...aboutArc(findings), ...aboutAngles(findings), ...aboutScatter(findings)]
 }

@@ -6,7 +6,7 @@
  */
 import { describe, expect, it } from 'vitest'
 import { fitOrbit, predict, type FitResult, type RelativeMeasure } from '../../fitting'
-import { readFixture } from './published'
+import { cell, readFixture } from './published'
 
 const MAS = 1 / 1000
 
@@ -70,5 +70,31 @@ describe('star S2, 38 epochs, seven elements in east and north, without a starti
     const left = laplaceRungeLenz.magnitude.value ** 2
     const right = gravitationalParameter.value ** 2 + 2 * specificEnergy.value * angularMomentum.value ** 2
     expect(Math.abs(left / right - 1)).toBeLessThan(1e-12)
+  })
+})
+
+describe('places of the Fourth Catalog of Orbits (Worley & Heintz 1983, Publ. USNO 24/7), twenty years apart by one, fitted without a starting guess', () => {
+  const rows = readFixture('orbits_cat4.csv')
+  const orbits = [...new Set(rows.map((row) => row.seq))].map((seq) => rows.filter((row) => row.seq === seq)).filter(([first]) => cell(first!, 'P_yr') <= 40)
+
+  it.each(orbits.map((places) => ({ name: places[0]!.name!, places })))('give the published orbit of $name back, and not one of its aliases', ({ places }) => {
+    // θ is printed to 0.01° and ρ to 0.001″: errors of rounding, 1/√12 of the last digit.
+    const measures = places.filter((place) => cell(place, 'rho_arcsec') > 0).map((place, i): RelativeMeasure => ({
+      id: `p${i}`, observer: 'catalogue', epochYr: cell(place, 'epoch'),
+      position: { form: 'polar', thetaRad: (cell(place, 'theta_deg') * Math.PI) / 180, rhoArcsec: cell(place, 'rho_arcsec'), sigmaThetaRad: 5e-5, sigmaRhoArcsec: 0.00029 },
+    }))
+    const outcome = fitOrbit({ kind: 'relative', measures })
+    if (!outcome.ok) throw new Error(outcome.refusal.sentence)
+    const { elements, alternatives } = outcome.result
+    const published = places[0]!
+    const within = (name: string, column: string, least: number) => expect(Math.abs(elements[name]!.value - cell(published, column)), name).toBeLessThan(least + 4 * elements[name]!.sigmaScaled!)
+    within('period', 'P_yr', 0)
+    within('eccentricity', 'e', 0)
+    within('semiMajorAxis', 'a_arcsec', 0)
+    within('inclination', 'i_deg', 0)
+    const node = elements.node!.value - cell(published, 'node_deg')
+    expect(Math.abs(node - 180 * Math.round(node / 180))).toBeLessThan(4 * elements.node!.sigmaScaled!)
+    expect(alternatives.every((alternative) => alternative.elements.period!.value < elements.period!.value)).toBe(true)
+    expect(outcome.result.warnings.join(' ')).toContain('measures at equal intervals')
   })
 })
