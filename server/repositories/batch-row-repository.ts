@@ -29,6 +29,33 @@ export async function listBatchRows(reads: Reads, batchId: string): Promise<Batc
   )
 }
 
+export interface RowChoice {
+  /** Leave out what was not sent. */
+  isSentOnly: boolean
+  limit: number
+}
+
+/** Rows behind a row number, in the order of the file. */
+export async function listBatchRowsAfter(reads: Reads, batchId: string, { after, isSentOnly, limit }: RowChoice & { after: number }): Promise<BatchRowRecord[]> {
+  let query = rowsOf(reads, batchId).where('batch_row.row_number', '>', after)
+  if (isSentOnly) query = query.where('batch_row.state', '=', 'sent')
+  return query.orderBy('batch_row.row_number').limit(limit).execute()
+}
+
+/** The rows that matter most, in the order of the file: the one named, those that are bad, those with a note, then from the top. */
+export async function listForemostRows(reads: Reads, batchId: string, { isSentOnly, limit, rowId }: RowChoice & { rowId: string | null }): Promise<BatchRowRecord[]> {
+  let query = rowsOf(reads, batchId)
+  if (isSentOnly) query = query.where('batch_row.state', '=', 'sent')
+  const rows = await query
+    .orderBy(sql`batch_row.id IS ${rowId}`, 'desc')
+    .orderBy(sql`batch_row.state = 'bad'`, 'desc')
+    .orderBy(sql`(problems ->> '$.read' <> '[]' OR problems ->> '$.resolved' <> '[]')`, 'desc')
+    .orderBy('batch_row.row_number')
+    .limit(limit)
+    .execute()
+  return rows.sort((a, b) => a.row_number - b.row_number)
+}
+
 export async function getBatchRow(reads: Reads, batchId: string, rowId: string): Promise<BatchRowRecord> {
   const row = await rowsOf(reads, batchId).where('batch_row.id', '=', rowId).executeTakeFirst()
   if (!row) throw notFound()

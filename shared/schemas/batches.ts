@@ -18,6 +18,8 @@ export const UPLOAD_TYPES = ['text/csv', 'text/tab-separated-values', 'text/plai
 export const UPLOAD_CAP_BYTES = 8 * 1024 * 1024
 /** Most data rows that are read from one file. */
 export const UPLOAD_CAP_ROWS = 50_000
+/** Most rows that one view of a batch holds; GET /api/v1/batches/:id/rows answers all of them, page by page. */
+export const ROWS_IN_VIEW = 1000
 
 export const mendRowSchema = z.object({
   /** Replacement text by canonical column name; only those given change. */
@@ -74,7 +76,10 @@ export interface BatchView extends BatchSummary {
   reading: { encoding: string; delimiter: string; columns: string[]; unusedColumns: string[]; headerRow: number }
   fileProblems: CellProblem[]
   defaultTarget: { id: string; name: string } | null
+  /** In the order of the file. Where there are more than ROWS_IN_VIEW, those to mend come in first, then those with a note. */
   items: BatchRowView[]
+  /** How many rows `items` leaves out. */
+  rowsNotShown: number
   isMine: boolean
   mayWithdraw: boolean
 }

@@ -1,5 +1,6 @@
 import { mayReadBatch, mayReadDraftsAndRawFile } from '#shared/policies/reading'
 import type { BatchForReading } from '#shared/policies/reading'
+import { ROWS_IN_VIEW } from '#shared/schemas/batches'
 import type { BatchRowView, BatchSummary, BatchView, CellProblem } from '#shared/schemas/batches'
 import type { Context, Reads } from '../../context/context'
 import { isOpenToOthers, mayWithdraw } from '../../domain/batch-state'
@@ -8,7 +9,7 @@ import { listPartOverviews } from '../../repositories/batch-part-repository'
 import type { BatchPart, BatchPartOverview } from '../../repositories/batch-part-repository'
 import { getBatchOverview } from '../../repositories/batch-repository'
 import type { BatchOverview } from '../../repositories/batch-repository'
-import { listBatchRows } from '../../repositories/batch-row-repository'
+import { listForemostRows } from '../../repositories/batch-row-repository'
 import type { BatchRowRecord } from '../../repositories/batch-row-repository'
 import { getByteCount } from '../../repositories/raw-file-repository'
 import { findTarget } from '../../repositories/target-repository'
@@ -49,7 +50,7 @@ export function batchSummary(batch: BatchOverview, parts: readonly BatchPartOver
   }
 }
 
-function rowView(row: BatchRowRecord): BatchRowView {
+export function rowView(row: BatchRowRecord): BatchRowView {
   const originalCells = JSON.parse(row.original_cells) as Record<string, string>
   const mended = row.mended_cells === null ? {} : (JSON.parse(row.mended_cells) as Record<string, string>)
   const { read, resolved } = keptProblems(row)
@@ -64,14 +65,17 @@ function rowView(row: BatchRowRecord): BatchRowView {
   }
 }
 
-/** A batch as its page shows it: whole to its owner and the coordinators concerned, its sent rows to other signed-in people. */
-export async function viewBatch(ctx: Context, reads: Reads, batchId: string): Promise<BatchView> {
+/**
+ * A batch as its page shows it: whole to its owner and the coordinators concerned, its sent rows to other signed-in people. Of
+ * very many rows the foremost are shown, the one asked for among them.
+ */
+export async function viewBatch(ctx: Context, reads: Reads, batchId: string, rowId: string | null = null): Promise<BatchView> {
   const batch = await getBatchOverview(reads, batchId)
   const parts = await listPartOverviews(reads, [batchId])
   const forReading = batchForReading(batch, parts)
   if (!mayReadBatch(ctx.actor, forReading)) throw notFound()
   const isWhole = mayReadDraftsAndRawFile(ctx.actor, forReading)
-  const rows = (await listBatchRows(reads, batchId)).filter(row => isWhole || row.state === 'sent')
+  const rows = await listForemostRows(reads, batchId, { isSentOnly: !isWhole, limit: ROWS_IN_VIEW, rowId })
   const kept = JSON.parse(batch.reading) as KeptReading
   const target = batch.default_target_id === null ? undefined : await findTarget(reads, batch.default_target_id)
   const isMine = ctx.actor?.personId === batch.owner_id
@@ -84,6 +88,7 @@ export async function viewBatch(ctx: Context, reads: Reads, batchId: string): Pr
     fileProblems: kept.fileProblems,
     defaultTarget: target ? { id: target.id, name: target.name } : null,
     items: rows.map(rowView),
+    rowsNotShown: (isWhole ? batch.rows : batch.sent) - rows.length,
     isMine,
     mayWithdraw: isMine && parts.some(part => mayWithdraw(part.state)),
   }

@@ -58,6 +58,8 @@ export const TABLE: readonly Case[] = [
   { route: 'GET /api/v1/batches/:id', about: 'one that was sent', params: { id: 'sentBatch' }, expect: signedIn(200) },
   { route: 'GET /api/v1/batches/:id/raw', about: 'a draft', params: { id: 'draftBatch' }, expect: [401, 404, 404, 200, 404, 404, 404] },
   { route: 'GET /api/v1/batches/:id/raw', about: 'one that was sent', params: { id: 'sentBatch' }, expect: [401, 404, 404, 200, 200, 404, 404] },
+  { route: 'GET /api/v1/batches/:id/rows', about: 'a draft', params: { id: 'draftBatch' }, expect: [401, 404, 404, 200, 404, 404, 404] },
+  { route: 'GET /api/v1/batches/:id/rows', about: 'one that was sent', params: { id: 'sentBatch' }, expect: signedIn(200) },
   { route: 'PATCH /api/v1/batches/:id/rows/:rowId', params: { id: 'draftBatch', rowId: 'badRow' }, json: () => ({ cells: { theta_deg: '61' } }), expect: [401, 404, 404, 200, 404, 404, 404] },
   { route: 'PUT /api/v1/batches/:id/target', params: { id: 'draftBatch' }, json: t => ({ targetId: t.publishedTarget }), expect: [401, 404, 404, 200, 404, 404, 404] },
   { route: 'POST /api/v1/batches/:id/send', params: { id: 'draftBatch' }, json: () => ({}), expect: [401, 404, 404, 200, 404, 404, 404] },

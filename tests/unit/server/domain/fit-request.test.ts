@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { buildFitRequest, fitRole } from '../../../../server/domain/fit-request'
+import { canonicalJson } from '../../../../server/domain/canonical-json'
+import { buildFitRequest, fitRequestText, fitRole } from '../../../../server/domain/fit-request'
 import type { ParsedRow } from '../../../../shared/intake/parsed-row'
 import { readRow } from '../../../../shared/intake/read-row'
 
@@ -23,6 +24,13 @@ describe('the request of a fit', () => {
     const sun = { kind: 'plane', radius_unit: 'au', diameter_scale_arcmin: 31.99 } as const
     expect(buildFitRequest(sun, [{ id: 'a', observer: 'T. Orrowin', row }], { setAside: new Set() }).settings).toEqual({ seed: 1, radiusUnit: 'au', diameterScaleArcmin: 31.99 })
     expect(buildFitRequest(PAIR, [], { setAside: new Set(), model: 'line' }).settings).toEqual({ seed: 1, model: 'line' })
+  })
+
+  it('has the same canonical text where it is written measure by measure', async () => {
+    const measures = [{ id: 'a', observer: 'Élodie "E." Tasque', row: POLAR }, { id: 'b', observer: 'T. Orrowin', row: LIMIT }]
+    const options = { setAside: new Set(['b']), model: 'line' } as const
+    expect(await fitRequestText(PAIR, measures, options)).toBe(canonicalJson(buildFitRequest(PAIR, measures, options)))
+    expect(await fitRequestText(PAIR, [], options)).toBe(canonicalJson(buildFitRequest(PAIR, [], options)))
   })
 
   it('leaves limits out of the fit, whatever else was decided', () => {
