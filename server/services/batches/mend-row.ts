@@ -43,7 +43,7 @@ export async function mendRow(ctx: Context, { batchId, rowId, cells }: { batchId
       detail: { rowNumber: row.row_number, columns: Object.keys(cells) },
     })
     announceBatch(ctx, batchId)
-    return viewBatch(ctx, tx, batchId)
+    return viewBatch(ctx, tx, batchId, rowId)
   })
 }
 
