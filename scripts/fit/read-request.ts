@@ -1,10 +1,13 @@
-import type { FitRequest, FitSettings, Kind, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
+import type { FitRequest, FitSettings, Kind } from '../../fitting/types'
 import { guessKind } from '../../shared/intake/columns'
 import { decodeText } from '../../shared/intake/decode-text'
 import { readMeasures, type MeasureRow } from '../../shared/intake/read-measures'
 import { readTable } from '../../shared/intake/read-table'
-import { toFitMeasure } from '../../shared/intake/to-fit-measure'
+import { fitRequestOf, toFitMeasure } from '../../shared/intake/to-fit-measure'
+import { fileProblem } from '../../shared/intake/problems'
+import { isAvailableKind, KIND_COMING } from '../../shared/schemas/available-kinds'
 import type { CellProblem } from '../../shared/schemas/batches'
+import { runAtOnce } from '../../shared/turns/turns'
 import { argumentProblem } from './argument-problem'
 import { chooseTarget } from './choose-target'
 import type { FitArguments } from './read-arguments'
@@ -22,6 +25,7 @@ export function readRequest({ file, kind, target, settingsFile }: FitArguments):
   const read = readBytes(file)
   if (!read.ok) return read
   const ofKind = kind ?? kindOf(read.bytes)
+  if (!isAvailableKind(ofKind)) return { ok: false, problems: [fileProblem(KIND_COMING)] }
   const { fileProblems, rows } = readMeasures(read.bytes, { kind: ofKind })
   if (rows.length === 0) return { ok: false, problems: fileProblems }
   const chosen = chooseTarget(rows, target)
@@ -36,7 +40,7 @@ const isError = (problem: CellProblem) => problem.severity === 'error'
 
 function kindOf(bytes: Uint8Array): Kind {
   const decoded = decodeText(bytes)
-  const read = decoded.ok ? readTable(decoded.text) : null
+  const read = decoded.ok ? runAtOnce(readTable(decoded.text)) : null
   return read?.ok ? guessKind(read.table.headings) : 'relative'
 }
 
@@ -44,7 +48,7 @@ function kindOf(bytes: Uint8Array): Kind {
 function toRequest(kind: Kind, rows: MeasureRow[], settings: FitSettings): FitRequest {
   const measures = rows.flatMap(({ parsed, rowNumber, duplicateOfRow }) =>
     parsed && duplicateOfRow === null ? [toFitMeasure(parsed, `row-${rowNumber}`, parsed.observerName ?? UNNAMED_OBSERVER)] : [])
-  return kind === 'plane' ? { kind, measures: measures as PlaneMeasure[], settings } : { kind: 'relative', measures: measures as RelativeMeasure[], settings }
+  return fitRequestOf(kind, measures, settings)
 }
 
 function readSettings(file: string): { ok: true, settings: FitSettings } | { ok: false, problems: CellProblem[] } {

@@ -223,6 +223,14 @@ export interface MeasureTable {
   dec_deg: number | null
   sigma_ra_cosdec_arcsec: number | null
   sigma_dec_arcsec: number | null
+  sigma_time_s: number | null
+  longitude_east_deg: number | null
+  latitude_deg: number | null
+  height_m: number | null
+  rho_cos_phi: number | null
+  rho_sin_phi: number | null
+  star_catalogue: string | null
+  tracklet: string | null
   phi_deg: number | null
   r: number | null
   sigma_r: number | null

@@ -1,6 +1,6 @@
-import type { FitRequest, FitSettings, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
+import type { FitRequest, FitSettings } from '../../fitting/types'
 import type { ParsedRow } from '../../shared/intake/parsed-row'
-import { toFitMeasure } from '../../shared/intake/to-fit-measure'
+import { fitRequestOf, toFitMeasure, type FitMeasure } from '../../shared/intake/to-fit-measure'
 import { mapInTurns } from '../../shared/turns/turns'
 import { canonicalJson } from './canonical-json'
 
@@ -37,9 +37,7 @@ export function fitRole(row: ParsedRow, isSetAside: boolean): 'used' | 'set-asid
 export function buildFitRequest(target: FittedTarget, measures: readonly StandingMeasure[], options: RequestOptions): FitRequest {
   const settings = settingsOf(target, options)
   const asked = measures.map(measure => askedMeasure(measure, options))
-  if (target.kind === 'plane') return { kind: 'plane', measures: asked as PlaneMeasure[], settings }
-  if (target.kind === 'relative') return { kind: 'relative', measures: asked as RelativeMeasure[], settings }
-  throw new RangeError('a target of the kind equatorial cannot have measures yet')
+  return fitRequestOf(target.kind, asked, settings)
 }
 
 /** The canonical JSON of that request, written measure by measure and in slices: of ten thousand it takes a while. */
@@ -49,7 +47,7 @@ export async function fitRequestText(target: FittedTarget, measures: readonly St
   return `{"kind":${canonicalJson(kind)},"measures":[${asked.join(',')}],"settings":${canonicalJson(settings)}}`
 }
 
-function askedMeasure({ id, observer, row }: StandingMeasure, { setAside }: RequestOptions): RelativeMeasure | PlaneMeasure {
+function askedMeasure({ id, observer, row }: StandingMeasure, { setAside }: RequestOptions): FitMeasure {
   const measure = toFitMeasure(row, id, observer)
   return setAside.has(id) ? { ...measure, setAside: true } : measure
 }

@@ -57,24 +57,43 @@ const PLANE_COLUMNS = [
   ['remarks', 'anything else', null],
 ] as const
 
-export type MeasureColumn = (typeof RELATIVE_COLUMNS)[number][0] | (typeof PLANE_COLUMNS)[number][0]
-/** The kinds whose measures can be read. */
-export type ReadableKind = 'relative' | 'plane'
+const EQUATORIAL_COLUMNS = [
+  ['target', 'name of the comet or minor planet', null],
+  ['time_utc', 'middle of the exposure: ISO 8601 in UTC, or a date with a fraction of the day such as 2026-03-14.51234', null],
+  ['ra_deg', 'right ascension, ICRS', 'deg'],
+  ['ra_hms', 'the same as hours, minutes and seconds: 02 46 50.07', null],
+  ['dec_deg', 'declination, ICRS', 'deg'],
+  ['dec_dms', 'the same as degrees, minutes and seconds: −00 12 57.5', null],
+  ['station', 'code or name of where it was measured', null],
+  ['lon_deg', 'longitude of the station, east positive', 'deg'],
+  ['lat_deg', 'latitude of the station, WGS 84', 'deg'],
+  ['height_m', 'height of the station', 'm'],
+  ['sigma_ra_cosdec_arcsec', 'standard error along right ascension, on the sky (times cos δ)', 'arcsec'],
+  ['sigma_dec_arcsec', 'standard error of the declination', 'arcsec'],
+  ['corr_ra_dec', 'correlation of the two', '1'],
+  ['sigma_time_s', 'standard error of the time', 's'],
+  ['star_catalogue', 'catalogue of the comparison stars', null],
+  ['tracklet', 'a name that measures of one night and one motion share', null],
+  ['mag', 'magnitude', 'mag'],
+  ['band', 'passband of the magnitude', null],
+  ['observer', 'who measured', null],
+  ['remarks', 'anything else', null],
+] as const
+
+export type MeasureColumn =
+  | (typeof RELATIVE_COLUMNS)[number][0] | (typeof PLANE_COLUMNS)[number][0] | (typeof EQUATORIAL_COLUMNS)[number][0]
 
 const meanings = (rows: readonly (readonly [MeasureColumn, string, string | null])[]): ColumnMeaning[] =>
   rows.map(([name, meaning, unit]) => ({ name, meaning, unit }))
 
-export const COLUMNS: Record<ReadableKind, readonly ColumnMeaning[]> = {
+export const COLUMNS: Record<Kind, readonly ColumnMeaning[]> = {
   relative: meanings(RELATIVE_COLUMNS),
+  equatorial: meanings(EQUATORIAL_COLUMNS),
   plane: meanings(PLANE_COLUMNS),
 }
 
-/** Columns of `equatorial` that no readable kind has: they tell what a file is about. */
+/** Columns of `equatorial` that no other kind has: they tell what a file is about. */
 const EQUATORIAL_MARKS = ['ra_deg', 'ra_hms', 'dec_deg', 'dec_dms']
-
-export function isReadableKind(kind: Kind): kind is ReadableKind {
-  return kind === 'relative' || kind === 'plane'
-}
 
 /** Upper case, hyphens and spaces in a heading do not matter: "Theta deg" is theta_deg. */
 export function canonicalHeading(heading: string): string {

@@ -1,5 +1,6 @@
+import { KINDS, type Kind } from '../../fitting/types'
 import type { CellProblem } from '../schemas/batches'
-import { canonicalHeading, COLUMNS, EPOCH_COLUMNS, type MeasureColumn, type ReadableKind } from './columns'
+import { canonicalHeading, COLUMNS, EPOCH_COLUMNS, type MeasureColumn } from './columns'
 import { nearestName } from './nearest-name'
 import { asNote, fileProblem } from './problems'
 import { holdsNumbers, type Table } from './read-table'
@@ -18,10 +19,16 @@ export interface MatchedColumns {
 const MOST_COLUMNS = 500
 
 /** What every file of a kind must have a column of, in words. */
-const NEEDED: Record<ReadableKind, { what: string; anyOf: readonly MeasureColumn[] }[]> = {
+const NEEDED: Record<Kind, { what: string; anyOf: readonly MeasureColumn[] }[]> = {
   relative: [
     { what: 'when it was measured (epoch, jd, mjd or date)', anyOf: EPOCH_COLUMNS },
     { what: 'what was measured (theta_deg and rho_arcsec, east_arcsec and north_arcsec, or rho_limit_arcsec)', anyOf: ['theta_deg', 'rho_arcsec', 'east_arcsec', 'north_arcsec', 'rho_limit_arcsec'] },
+  ],
+  equatorial: [
+    { what: 'when it was measured (time_utc)', anyOf: ['time_utc'] },
+    { what: 'the right ascension (ra_deg or ra_hms)', anyOf: ['ra_deg', 'ra_hms'] },
+    { what: 'the declination (dec_deg or dec_dms)', anyOf: ['dec_deg', 'dec_dms'] },
+    { what: 'where it was measured (station, or lon_deg, lat_deg and height_m)', anyOf: ['station', 'lon_deg', 'lat_deg', 'height_m'] },
   ],
   plane: [
     { what: 'the direction (phi_deg)', anyOf: ['phi_deg'] },
@@ -30,7 +37,7 @@ const NEEDED: Record<ReadableKind, { what: string; anyOf: readonly MeasureColumn
 }
 
 /** Finds the canonical columns among a file's headings, and says which are missing, twice there or not used. */
-export function matchColumns(table: Table, kind: ReadableKind): MatchedColumns {
+export function matchColumns(table: Table, kind: Kind): MatchedColumns {
   const inHeader = { rowNumber: table.headerRow }
   const nothing: MatchedColumns = { used: [], columns: [], unusedColumns: [], errors: [], notes: [] }
   if (table.headings.length > MOST_COLUMNS) return { ...nothing, errors: [fileProblem(FILE_SENTENCES.tooManyColumns(table.headings.length, MOST_COLUMNS), inHeader)] }
@@ -54,16 +61,15 @@ export function matchColumns(table: Table, kind: ReadableKind): MatchedColumns {
 interface UnusedColumn {
   heading: string
   name: string
-  kind: ReadableKind
+  kind: Kind
   rowNumber: number
   /** Canonical names that the file does not have yet. */
   free: MeasureColumn[]
 }
 
 function unusedNote({ heading, name, kind, rowNumber, free }: UnusedColumn): CellProblem {
-  const other = kind === 'relative' ? 'plane' : 'relative'
-  const belongsToOther = COLUMNS[other].some(column => column.name === name)
-  const sentence = belongsToOther ? FILE_SENTENCES.columnOfOtherKind(other) : FILE_SENTENCES.columnNotUsed(nearestName(name, free))
+  const other = KINDS.find(candidate => candidate !== kind && COLUMNS[candidate].some(column => column.name === name))
+  const sentence = other ? FILE_SENTENCES.columnOfOtherKind(other) : FILE_SENTENCES.columnNotUsed(nearestName(name, free))
   return asNote(fileProblem(sentence, { rowNumber, column: heading.slice(0, 60), value: heading.slice(0, 80) }))
 }
 

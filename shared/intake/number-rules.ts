@@ -1,5 +1,5 @@
 import type { NumberRule } from './row-reader'
-import { VALUE_SENTENCES } from './sentences'
+import { SKY_SENTENCES, VALUE_SENTENCES } from './sentences'
 
 /** The limits of single values; what depends on two cells of a row stands with the row. */
 
@@ -13,6 +13,8 @@ function wrapped(valueDeg: number): string {
   const turns = valueDeg - FULL_TURN_DEG * Math.floor(valueDeg / FULL_TURN_DEG)
   return String(Number(turns.toPrecision(12)))
 }
+
+export const declination: NumberRule = value => (value >= -90 && value <= 90 ? null : SKY_SENTENCES.decRange())
 
 export const separation: NumberRule = (value) => {
   if (value === 0) return VALUE_SENTENCES.separationZero()

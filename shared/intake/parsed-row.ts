@@ -1,3 +1,5 @@
+import type { MeasureSite } from '../../fitting/types'
+
 /**
  * One row of a file as it was understood: degrees and arcseconds as written, the epoch turned into a Julian year (TT).
  * Plain JSON, so that it can lie beside the original cells. A value that was not given is null.
@@ -55,7 +57,29 @@ export interface ParsedPlaneRow extends ParsedRowBase {
   sigmaDiameterArcmin: number | null
 }
 
-export type ParsedRow = ParsedRelativeRow | ParsedPlaneRow
+export interface ParsedEquatorialRow extends ParsedRowBase {
+  kind: 'equatorial'
+  /** Middle of the exposure, ISO 8601 in UTC with milliseconds and Z. */
+  timeUtc: string
+  /** The same as a Julian year (TT). */
+  epochYr: number
+  /** On the axes of the ICRS; 0 ≤ α < 360, −90 ≤ δ ≤ 90. */
+  raDeg: number
+  decDeg: number
+  site: MeasureSite
+  /** Code or name of the station as written. */
+  stationText: string | null
+  sigmaRaCosDecArcsec: number | null
+  sigmaDecArcsec: number | null
+  correlation: number | null
+  sigmaTimeS: number | null
+  starCatalogue: string | null
+  tracklet: string | null
+  mag: number | null
+  band: string | null
+}
+
+export type ParsedRow = ParsedRelativeRow | ParsedEquatorialRow | ParsedPlaneRow
 
 /** The text of a row by canonical column name; a column that the file does not have is not there. */
 export type RowCells = Record<string, string>

@@ -1,7 +1,6 @@
 import type { Kind } from '../../fitting/types'
 import { UPLOAD_CAP_ROWS, type CellProblem } from '../schemas/batches'
 import { runAtOnce, type Steps } from '../turns/turns'
-import { isReadableKind, type ReadableKind } from './columns'
 import { decodeText } from './decode-text'
 import { delimiterWord, delimitersIn, type Delimiter } from './delimiter'
 import { gatherNotes } from './gather-notes'
@@ -55,7 +54,6 @@ export function* readMeasuresInSteps(input: Uint8Array | string, options: ReadOp
   const reading: Reading = { encoding: '', delimiter: '', columns: [], unusedColumns: [], headerRow: 0 }
   const refuse = (...fileProblems: CellProblem[]): MeasureReading => ({ reading, fileProblems, rows: [] })
   const { kind } = options
-  if (!isReadableKind(kind)) return refuse(fileProblem(FILE_SENTENCES.kindComing()))
 
   const decoded = decodeText(typeof input === 'string' ? new TextEncoder().encode(input) : input)
   if (!decoded.ok) return refuse(decoded.problem)
@@ -98,7 +96,7 @@ function otherDelimiter(record: TableRecord, delimiter: Delimiter): Delimiter | 
 interface Surroundings {
   table: Table
   matched: MatchedColumns
-  kind: ReadableKind
+  kind: Kind
   now: number | undefined
 }
 

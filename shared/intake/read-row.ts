@@ -1,8 +1,9 @@
+import type { Kind } from '../../fitting/types'
 import type { CellProblem } from '../schemas/batches'
-import type { ReadableKind } from './columns'
 import type { Delimiter } from './delimiter'
 import type { ParsedRow, RowCells } from './parsed-row'
 import { RowProblems } from './problems'
+import { readEquatorialRow } from './read-equatorial-row'
 import { readPlaneRow } from './read-plane-row'
 import { readRelativeRow } from './read-relative-row'
 import { RowReader } from './row-reader'
@@ -16,10 +17,15 @@ export interface RowOptions {
 }
 
 /** Reads one row by its canonical cells: as a file is read, or as a person mends it. */
-export function readRow(cells: RowCells, kind: ReadableKind, options: RowOptions = {}): { parsed: ParsedRow | null; problems: CellProblem[] } {
+export function readRow(cells: RowCells, kind: Kind, options: RowOptions = {}): { parsed: ParsedRow | null; problems: CellProblem[] } {
   const { rowNumber = 0, now, delimiter } = options
   const problems = new RowProblems(rowNumber)
   const row = new RowReader(cells, problems, { allowsDecimalComma: delimiter !== 'comma', ...(delimiter ? { delimiter } : {}) })
-  const parsed = kind === 'relative' ? readRelativeRow(row, now) : readPlaneRow(row, now)
-  return { parsed, problems: problems.list }
+  return { parsed: READERS[kind](row, now), problems: problems.list }
+}
+
+const READERS: Record<Kind, (row: RowReader, nowYr?: number) => ParsedRow | null> = {
+  relative: readRelativeRow,
+  equatorial: readEquatorialRow,
+  plane: readPlaneRow,
 }

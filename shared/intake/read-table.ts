@@ -20,7 +20,7 @@ export interface Table {
   records: TableRecord[]
 }
 
-const KNOWN_NAMES: ReadonlySet<string> = new Set([...COLUMNS.relative, ...COLUMNS.plane].map(column => column.name))
+const KNOWN_NAMES: ReadonlySet<string> = new Set(Object.values(COLUMNS).flat().map(column => column.name))
 
 export type ReadTable = { ok: true; table: Table } | { ok: false; problem: CellProblem }
 

@@ -18,9 +18,19 @@ const MONTHS = ['January', 'February', 'March', 'April', 'May', 'June', 'July', 
 /** Reads a date or time in ISO 8601; without a zone it is UTC, and a date alone counts as 0 h. */
 export function readTime(text: string): ReadTime {
   const read = readIsoTime(text)
-  if (!read.ok) return { ok: false, complaint: complaintAbout(text.trim(), read.problem) }
-  const iso = new Date(Math.round((read.jd - UNIX_EPOCH_JD) * DAY_MS)).toISOString()
-  return { ok: true, time: { iso, epochYr: julianYearOfUtcJd(read.jd) } }
+  if (!read.ok) return { ok: false, complaint: complaintAboutTime(text.trim(), read.problem) }
+  return { ok: true, time: { iso: millisecondTime(read.jd).iso, epochYr: julianYearOfUtcJd(read.jd) } }
+}
+
+/** A Julian date of UTC to the millisecond: as ISO 8601, and as the Julian date that this text stands for. */
+export function millisecondTime(jdUtc: number): { iso: string; jdUtc: number } {
+  const iso = new Date(Math.round((jdUtc - UNIX_EPOCH_JD) * DAY_MS)).toISOString()
+  return { iso, jdUtc: julianDateOfIso(iso) }
+}
+
+/** The Julian date of UTC that a time of ours (milliseconds and Z) stands for. */
+export function julianDateOfIso(iso: string): number {
+  return UNIX_EPOCH_JD + Date.parse(iso) / DAY_MS
 }
 
 /** Julian year (TT) of a Julian date in UTC, or in UT before 1972; before 1620, where no table of ΔT reaches, UT is taken for TT. */
@@ -29,7 +39,8 @@ export function julianYearOfUtcJd(jdUtc: number): number {
   return julianEpochFromJd(Number.isNaN(jdTt) ? jdUtc : jdTt)
 }
 
-function complaintAbout(written: string, problem: 'not-iso' | 'no-such-date' | 'no-such-time'): Complaint {
+/** What is wrong with a date or time that was understood as such; `written` begins with year-month-day. */
+export function complaintAboutTime(written: string, problem: 'not-iso' | 'no-such-date' | 'no-such-time'): Complaint {
   if (problem === 'not-iso') return EPOCH_SENTENCES.notADate()
   if (problem === 'no-such-time') return EPOCH_SENTENCES.noSuchTime()
   const year = Number(written.slice(0, 4))

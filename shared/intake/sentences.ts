@@ -16,7 +16,6 @@ export const FILE_SENTENCES = {
   columnMissing: (what: string, found: string) => complain(`No column says ${what}. Found: ${found}.`, `Name the column by one of the known names; ${what} is needed in every file.`),
   tooManyColumns: (columns: number, cap: number) => complain(`The first row has ${columns} columns; ${cap} are read at most.`, 'Leave out the columns that hold nothing of the measures.'),
   tooManyRows: (rows: number, cap: number) => complain(`The file has ${rows} rows of measures; ${cap} are read at once.`, 'Split it into several files.'),
-  kindComing: () => complain('Measures in right ascension and declination cannot be read yet: that is coming with the engine for comets and minor planets.', 'Keep the file; pairs (θ, ρ or east, north) and positions in the plane of an orbit (φ, r) can be sent now.'),
   inManyRows: (note: Complaint, rows: number) => complain(`In ${rows} rows: ${note.reason}`, note.remedy),
   columnNotUsed: (nearest: string | null) => complain('This column is not used.', nearest ? `Did you mean ${nearest}? Rename the column if so.` : 'Nothing needs doing if that is right.'),
   columnOfOtherKind: (kind: string) => complain(`This column is not used: it belongs to measures of the kind ${kind}.`, 'Choose the other kind if that is what the file holds.'),
@@ -84,6 +83,26 @@ export const POSITION_SENTENCES = {
   planeDirection: () => complain('no direction in the plane of the orbit', 'Give phi_deg.'),
   planeNothing: () => complain('no distance', 'Give r or diameter_arcmin.'),
   planeBoth: () => complain('both r and diameter_arcmin', 'Keep one of the two and leave the other empty.'),
+} as const
+
+export const SKY_SENTENCES = {
+  timeMissing: () => complain('no time of the measure', 'Give time_utc, the middle of the exposure.'),
+  notATime: () => complain('not a time in ISO 8601', 'Write 2026-03-14T12:17:46.2Z, or the date with a fraction of the day, 2026-03-14.51234.'),
+  timeOfDayMissing: () => complain('a date without a time of day', 'Give the middle of the exposure in UTC, such as 2026-03-14T12:17:46Z or 2026-03-14.51234: a body that moves has a place only at a time.'),
+  yearRange: (first: number, last: number) => complain(`not a year from ${first} to ${last}`, 'Check the digits of the year.'),
+  raMissing: () => complain('no right ascension', 'Give ra_deg in degrees, or ra_hms in hours, minutes and seconds.'),
+  decMissing: () => complain('no declination', 'Give dec_deg in degrees, or dec_dms in degrees, minutes and seconds.'),
+  decRange: () => complain('outside −90 to 90 degrees', 'A declination runs from −90 at the south pole of the sky to 90 at the north pole. Check the sign and the digits.'),
+  hoursRange: () => complain('outside 0 to 24 hours', 'Hours of right ascension run from 0 to 23; 24 h is 00 h.'),
+  minutesRange: () => complain('minutes or seconds of 60 or more', 'Minutes and seconds run from 0 to 59; check the digits.'),
+  notSexagesimal: (example: string) => complain('not written as three numbers', `Write it as ${example}, with blanks or colons between.`),
+  degreesInHms: () => complain('a single number, not hours, minutes and seconds', 'Write 02 46 50.07. Degrees with decimals go in the column ra_deg.'),
+  degreesInDms: () => complain('a single number, not degrees, minutes and seconds', 'Write +15 12 57.5. Degrees with decimals go in the column dec_deg.'),
+  formsDiffer: (first: string, second: string) => complain(`${first} and ${second} say different places`, 'Keep one of the two and leave the other empty.'),
+  stationMissing: () => complain('no station', 'Give the code of a known station in the column station, or lon_deg, lat_deg and height_m.'),
+  stationUnknown: (known: string) => complain('not a station whose place is known here', `Give lon_deg (east positive), lat_deg and height_m as well. Known by code: ${known}.`),
+  stationHalf: (missing: string) => complain('the place of the station is not complete', `Give ${missing} as well.`),
+  stationRounded: () => complain('The place of the station is kept to 0.01° and 100 m, so that nobody reads from it where somebody lives. The error of that stays below 0.002″ beyond 1 au.', 'Nothing needs doing.'),
 } as const
 
 function complain(reason: string, remedy: string): Complaint {

@@ -1,5 +1,6 @@
-import type { PlaneMeasure, RelativeMeasure } from '../../fitting/types'
-import type { ParsedPlaneRow, ParsedRelativeRow, ParsedRow } from './parsed-row'
+import type { EquatorialMeasure, FitRequest, FitSettings, Kind, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
+import type { ParsedEquatorialRow, ParsedPlaneRow, ParsedRelativeRow, ParsedRow } from './parsed-row'
+import { julianDateOfIso } from './read-time'
 
 const RAD_A_DEG = Math.PI / 180
 
@@ -8,12 +9,21 @@ interface Credit {
   observer: string
 }
 
+export type FitMeasure = FitRequest['measures'][number]
+
 /** A row as the engine takes it: degrees become radians, what was not given is left out. */
 export function toFitMeasure(row: ParsedRelativeRow, id: string, observer: string): RelativeMeasure
+export function toFitMeasure(row: ParsedEquatorialRow, id: string, observer: string): EquatorialMeasure
 export function toFitMeasure(row: ParsedPlaneRow, id: string, observer: string): PlaneMeasure
-export function toFitMeasure(row: ParsedRow, id: string, observer: string): RelativeMeasure | PlaneMeasure
-export function toFitMeasure(row: ParsedRow, id: string, observer: string): RelativeMeasure | PlaneMeasure {
-  return row.kind === 'relative' ? relativeMeasure(row, { id, observer }) : planeMeasure(row, { id, observer })
+export function toFitMeasure(row: ParsedRow, id: string, observer: string): FitMeasure
+export function toFitMeasure(row: ParsedRow, id: string, observer: string): FitMeasure {
+  if (row.kind === 'relative') return relativeMeasure(row, { id, observer })
+  return row.kind === 'plane' ? planeMeasure(row, { id, observer }) : equatorialMeasure(row, { id, observer })
+}
+
+/** The engine's request; the measures are those of rows of this kind. */
+export function fitRequestOf(kind: Kind, measures: readonly FitMeasure[], settings: FitSettings): FitRequest {
+  return { kind, measures, settings } as FitRequest
 }
 
 function relativeMeasure(row: ParsedRelativeRow, credit: Credit): RelativeMeasure {
@@ -40,6 +50,25 @@ function positionOf(row: ParsedRelativeRow): RelativeMeasure['position'] {
     sigmaRhoArcsec: row.sigmaRhoArcsec,
     correlation: row.correlation,
     quadrant: row.quadrant,
+  })
+}
+
+function equatorialMeasure(row: ParsedEquatorialRow, credit: Credit): EquatorialMeasure {
+  return given({
+    ...credit,
+    station: row.stationText,
+    jdUtc: julianDateOfIso(row.timeUtc),
+    raRad: row.raDeg * RAD_A_DEG,
+    decRad: row.decDeg * RAD_A_DEG,
+    site: row.site,
+    sigmaRaCosDecArcsec: row.sigmaRaCosDecArcsec,
+    sigmaDecArcsec: row.sigmaDecArcsec,
+    correlation: row.correlation,
+    sigmaTimeS: row.sigmaTimeS,
+    magnitude: row.mag,
+    band: row.band,
+    starCatalogue: row.starCatalogue,
+    tracklet: row.tracklet,
   })
 }
 

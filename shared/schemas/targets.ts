@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { KINDS } from '../../fitting/types'
+import { KINDS, type MeasureSite } from '../../fitting/types'
 import { idSchema, pageQuerySchema } from './ids'
 import type { EditionSummary } from './editions'
 import type { FitSummary, FitView } from './fits'
@@ -105,4 +105,22 @@ export interface MeasureView {
   nights: number | null
   method: string | null
   remarks: string | null
+  /** Of a comet or minor planet only. */
+  sky?: SkyPlaceView
+}
+
+/** Where a comet or minor planet was seen, from where, and how well. */
+export interface SkyPlaceView {
+  raDeg: number
+  decDeg: number
+  sigmaRaCosDecArcsec: number | null
+  sigmaDecArcsec: number | null
+  correlation: number | null
+  sigmaTimeS: number | null
+  station: string | null
+  site: MeasureSite
+  starCatalogue: string | null
+  tracklet: string | null
+  mag: number | null
+  band: string | null
 }

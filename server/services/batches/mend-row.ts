@@ -1,4 +1,4 @@
-import { COLUMNS, isReadableKind } from '#shared/intake/columns'
+import { COLUMNS } from '#shared/intake/columns'
 import { readRow } from '#shared/intake/read-row'
 import type { BatchView } from '#shared/schemas/batches'
 import type { Kind } from '../../../fitting/types'
@@ -27,9 +27,7 @@ export async function mendRow(ctx: Context, { batchId, rowId, cells }: { batchId
     refuseUnknownColumns(batch.kind, cells)
     const original = JSON.parse(row.original_cells) as Record<string, string>
     const mended = { ...(row.mended_cells === null ? {} : (JSON.parse(row.mended_cells) as Record<string, string>)), ...cells }
-    const reading = isReadableKind(batch.kind)
-      ? readRow({ ...original, ...mended }, batch.kind, { rowNumber: row.row_number })
-      : { parsed: null, problems: [] }
+    const reading = readRow({ ...original, ...mended }, batch.kind, { rowNumber: row.row_number })
     await updateBatchRow(tx, rowId, {
       mended_cells: JSON.stringify(mended),
       parsed: reading.parsed === null ? null : JSON.stringify(reading.parsed),
@@ -48,7 +46,7 @@ export async function mendRow(ctx: Context, { batchId, rowId, cells }: { batchId
 }
 
 function refuseUnknownColumns(kind: Kind, cells: Record<string, string>): void {
-  const known = isReadableKind(kind) ? COLUMNS[kind].map(column => column.name as string) : []
+  const known = COLUMNS[kind].map(column => column.name as string)
   const unknown = Object.keys(cells).filter(column => !known.includes(column))
   if (unknown.length > 0) throw inputInvalid(unknown.map(column => ({ path: `cells.${column}`, reason: `is no column of the kind ${kind}` })))
 }

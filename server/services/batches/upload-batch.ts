@@ -2,6 +2,7 @@ import { readMeasuresInSteps } from '#shared/intake/read-measures'
 import type { MeasureReading, MeasureRow } from '#shared/intake/read-measures'
 import { ROW_SENTENCES } from '#shared/intake/sentences'
 import { mayUpload } from '#shared/policies/uploading'
+import { isAvailableKind, KIND_COMING } from '#shared/schemas/available-kinds'
 import type { BatchView } from '#shared/schemas/batches'
 import { mapInTurns, mapLazily, runInTurns } from '#shared/turns/turns'
 import type { Kind } from '../../../fitting/types'
@@ -50,8 +51,7 @@ export async function uploadBatch(ctx: Context, upload: Upload): Promise<BatchVi
 
 /** Known before a byte is read; the page and the route ask it as well. */
 export function refuseComingKind(kind: Kind): void {
-  if (kind !== 'equatorial') return
-  throw new AppError('kind-not-available', 'Comets and minor planets are coming with the next engine; double stars and bodies in the plane of their orbit can be uploaded now.')
+  if (!isAvailableKind(kind)) throw new AppError('kind-not-available', `${KIND_COMING.reason} ${KIND_COMING.remedy}`)
 }
 
 async function refuseUnfitTarget(ctx: Context, upload: Upload): Promise<void> {

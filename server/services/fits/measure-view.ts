@@ -1,6 +1,7 @@
 import type { FitMeasureView } from '#shared/schemas/fits'
-import type { MeasureView } from '#shared/schemas/targets'
+import type { MeasureView, SkyPlaceView } from '#shared/schemas/targets'
 import type { FitMeasureRecord } from '../../repositories/fit-content-repository'
+import { siteOf } from '../../repositories/measure-columns'
 import type { MeasureRecord } from '../../repositories/measure-repository'
 
 /** A measure as pages and downloads show it. */
@@ -28,6 +29,24 @@ export function measureView(measure: MeasureRecord): MeasureView {
     nights: measure.nights,
     method: measure.method,
     remarks: measure.remarks,
+    ...(measure.kind === 'equatorial' ? { sky: skyPlaceView(measure) } : {}),
+  }
+}
+
+function skyPlaceView(measure: MeasureRecord): SkyPlaceView {
+  return {
+    raDeg: measure.ra_deg!,
+    decDeg: measure.dec_deg!,
+    sigmaRaCosDecArcsec: measure.sigma_ra_cosdec_arcsec,
+    sigmaDecArcsec: measure.sigma_dec_arcsec,
+    correlation: measure.correlation,
+    sigmaTimeS: measure.sigma_time_s,
+    station: measure.station_text,
+    site: siteOf(measure),
+    starCatalogue: measure.star_catalogue,
+    tracklet: measure.tracklet,
+    mag: measure.mag,
+    band: measure.band,
   }
 }
 

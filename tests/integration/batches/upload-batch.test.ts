@@ -103,7 +103,7 @@ describe('an upload that cannot be used writes nothing', () => {
 
   it('a kind that is coming with the next engine', async () => {
     const before = await countRows(house)
-    await expect(upload('time_utc,ra_deg,dec_deg\n', { kind: 'equatorial', targetId: null })).rejects.toMatchObject({ code: 'kind-not-available', detail: expect.stringMatching(/coming with the next engine/) as string })
+    await expect(upload('time_utc,ra_deg,dec_deg\n', { kind: 'equatorial', targetId: null })).rejects.toMatchObject({ code: 'kind-not-available', detail: expect.stringMatching(/coming with the engine/) as string })
     expect(await countRows(house)).toEqual(before)
   })
 

@@ -6,7 +6,7 @@ import { readMeasures, type MeasureReading } from '../../../../shared/intake/rea
 import { toFitMeasure } from '../../../../shared/intake/to-fit-measure'
 
 const SEED = 20261201
-const kind = fc.constantFrom('relative' as const, 'plane' as const)
+const kind = fc.constantFrom('relative' as const, 'plane' as const, 'equatorial' as const)
 
 function expectEveryRowReadOrExplained({ rows, fileProblems }: MeasureReading) {
   const refusals = fileProblems.filter(problem => problem.severity === 'error')
@@ -33,7 +33,7 @@ describe('whatever bytes are sent', () => {
   it('every row under a good row of names is read or has a reason and a remedy', () => {
     const cell = fc.oneof(
       fc.string({ unit: 'binary', maxLength: 12 }),
-      fc.constantFrom('', 'NaN', '1e999', '2026.72', 'B1950', '0', '-0', '361', '62,4', '"', 'stated', '2026-02-30', '__proto__'),
+      fc.constantFrom('', 'NaN', '1e999', '2026.72', 'B1950', '0', '-0', '361', '62,4', '"', 'stated', '2026-02-30', '2026-03-14.5', '02 46 50.07', '-00 12 57.5', '910', '__proto__'),
       fc.double().map(String),
       fc.double({ min: 0.001, max: 359, noNaN: true }).map(String),
     )

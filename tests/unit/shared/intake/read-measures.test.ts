@@ -108,12 +108,6 @@ describe('a file that cannot be read as measures', () => {
     expect(first?.reason).toContain(reason)
     expect(first?.remedy).toMatch(/\w{3}/)
   })
-
-  it('is refused by kind: equatorial measures are coming with their engine', () => {
-    const { fileProblems, rows } = readMeasures('time_utc,ra_deg,dec_deg\n', { kind: 'equatorial' })
-    expect(rows).toEqual([])
-    expect(fileProblems[0]!.reason).toContain('coming with the engine')
-  })
 })
 
 describe('reading positions in the plane of an orbit', () => {
