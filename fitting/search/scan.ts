@@ -5,11 +5,15 @@
  */
 import { fallOfChiSquare, fallOfChiSquareAlike, fold, hasErrorsAlike, makeFolded, withErrorsAlike } from './scan-sums'
 import type { SearchPoints } from './search-points'
-import { TABLE_BINS, unitOrbitTables } from './unit-orbit-table'
+import { eccentricOrbitTables, TABLE_BINS, unitOrbitTables, type UnitOrbitTable } from './unit-orbit-table'
 
 const FREQUENCY_STEP = 0.2
 const PERIOD_STEP = 1.4
 const LONGEST_SPANS = 12
+const FINE_STEPS = 10
+const FINE_FREQUENCY_STEP = 0.01
+/** In periods. */
+const FINE_PHASE_REACH = 0.08
 
 /** One cell of the scan at its best phase. */
 export interface ScanCell {
@@ -40,27 +44,63 @@ export function scanPeriods(spanYr: number, shortestYr: number): number[] {
   return above.length > 0 ? above : [shortestYr]
 }
 
+/** What is scanned: periods, eccentricities, and the phases of periastron to try, as indices into each table's phases. */
+export interface ScanGrid {
+  periodsYr: readonly number[]
+  tables: readonly UnitOrbitTable[]
+  phasesOf: (table: UnitOrbitTable) => readonly number[]
+}
+
 /**
- * Scans all periods and eccentricities.
+ * The coarse grid over everything.
+ * @param spanYr time from first to last measure, yr, > 0.
+ * @param shortestYr floor on the period, yr, > 0.
+ * @returns periods of scanPeriods, four eccentricities, all phases.
+ */
+export function coarseGrid(spanYr: number, shortestYr: number): ScanGrid {
+  const all = new Map(unitOrbitTables().map((table) => [table, Array.from({ length: table.phases }, (_, j) => j)]))
+  return { periodsYr: scanPeriods(spanYr, shortestYr), tables: unitOrbitTables(), phasesOf: (table) => all.get(table)! }
+}
+
+/**
+ * A fine grid about one minimum of high eccentricity: there the passages of periastron split χ² into many minima closer together than
+ * the coarse steps.
+ * @param periodYr of the minimum.
+ * @param phase of its periastron, in periods after the reference epoch.
+ * @param spanYr time from first to last measure, yr, > 0.
+ * @returns frequencies within 0.1/span in steps of 0.01/span, e from 0.9 to 0.99, phases within 0.08.
+ */
+export function eccentricGrid(periodYr: number, phase: number, spanYr: number): ScanGrid {
+  const steps = Array.from({ length: 2 * FINE_STEPS + 1 }, (_, k) => k - FINE_STEPS)
+  const periodsYr = steps.map((k) => 1 / (1 / periodYr + (k * FINE_FREQUENCY_STEP) / spanYr)).filter((period) => period > 0)
+  const phasesOf = ({ phases }: UnitOrbitTable) => {
+    const middle = Math.round(phase * phases)
+    const reach = Math.floor(FINE_PHASE_REACH * phases)
+    return Array.from({ length: 2 * reach + 1 }, (_, j) => middle + j - reach)
+  }
+  return { periodsYr, tables: eccentricOrbitTables(), phasesOf }
+}
+
+/**
+ * Scans a grid.
  * @param measured points of the used measures.
  * @param referenceEpochYr Julian year from which phases count.
- * @param periodsYr as made by scanPeriods.
+ * @param grid periods, eccentricities, phases.
  * @param onProgress called with the part done, 0 … 1.
  * @returns one cell for each period and eccentricity, by period index, then eccentricity index.
  */
-export function scan(measured: SearchPoints, referenceEpochYr: number, periodsYr: readonly number[], onProgress: (part: number) => void): ScanCell[] {
+export function scan(measured: SearchPoints, referenceEpochYr: number, grid: ScanGrid, onProgress: (part: number) => void): ScanCell[] {
   const cells: ScanCell[] = []
   const isAlike = hasErrorsAlike(measured)
   const points = isAlike ? withErrorsAlike(measured) : measured
   const fallOf = isAlike ? fallOfChiSquareAlike : fallOfChiSquare
   const folded = makeFolded(points)
-  const tables = unitOrbitTables()
-  periodsYr.forEach((periodYr, periodIndex) => {
+  grid.periodsYr.forEach((periodYr, periodIndex) => {
     fold(points, referenceEpochYr, periodYr, folded)
-    tables.forEach((table, eccentricityIndex) => {
+    grid.tables.forEach((table, eccentricityIndex) => {
       let best = -1
       let bestPhase = 0
-      for (let j = 0; j < table.phases; j++) {
+      for (const j of grid.phasesOf(table)) {
         const fall = fallOf(folded, table, (j * TABLE_BINS) / table.phases)
         if (fall > best) {
           best = fall
@@ -71,7 +111,7 @@ export function scan(measured: SearchPoints, referenceEpochYr: number, periodsYr
         periodIndex, eccentricityIndex, periodYr, eccentricity: table.eccentricity, phase: bestPhase, chiSquare: points.constant - best,
       })
     })
-    if (periodIndex % 16 === 15) onProgress((periodIndex + 1) / periodsYr.length)
+    if (periodIndex % 16 === 15) onProgress((periodIndex + 1) / grid.periodsYr.length)
   })
   return cells
 }
@@ -82,7 +122,7 @@ export function scan(measured: SearchPoints, referenceEpochYr: number, periodsYr
  * @returns the local minima, best first.
  */
 export function localMinima(cells: readonly ScanCell[]): ScanCell[] {
-  const width = unitOrbitTables().length
+  const width = 1 + cells.reduce((largest, cell) => Math.max(largest, cell.eccentricityIndex), 0)
   const minima = cells.filter((cell) => {
     for (let dp = -1; dp <= 1; dp++) {
       for (let de = -1; de <= 1; de++) {

@@ -27,12 +27,22 @@ function makeTable(eccentricity: number, phases: number): UnitOrbitTable {
 }
 
 let tables: UnitOrbitTable[] | null = null
+let eccentricTables: UnitOrbitTable[] | null = null
 
 /**
- * The scan's tables, made once.
+ * The coarse scan's tables, made once.
  * @returns eccentricities 0.1, 0.5, 0.8, 0.93 with 16, 32, 32, 64 phases.
  */
 export function unitOrbitTables(): UnitOrbitTable[] {
   tables ??= [makeTable(0.1, 16), makeTable(0.5, 32), makeTable(0.8, 32), makeTable(0.93, 64)]
   return tables
+}
+
+/**
+ * The fine scan's tables, made when first needed.
+ * @returns eccentricities 0.9, 0.95, 0.975, 0.99 with 256 phases each.
+ */
+export function eccentricOrbitTables(): UnitOrbitTable[] {
+  eccentricTables ??= [makeTable(0.9, 256), makeTable(0.95, 256), makeTable(0.975, 256), makeTable(0.99, 256)]
+  return eccentricTables
 }

@@ -8,7 +8,7 @@ import { skyProblem, skyRows } from '../../../../fitting/models/relative-problem
 import { prepareSkyMeasures } from '../../../../fitting/models/sky-measure'
 import { polish, startOf } from '../../../../fitting/search/polish'
 import { ProjectedOrbit } from '../../../../fitting/search/projected-orbit'
-import { localMinima, scan, scanPeriods } from '../../../../fitting/search/scan'
+import { coarseGrid, localMinima, scan, scanPeriods } from '../../../../fitting/search/scan'
 import { searchPoints } from '../../../../fitting/search/search-points'
 import { simulatedSystem, type SystemOptions } from '../../../builders/double-star-systems'
 
@@ -109,7 +109,7 @@ describe('the projected orbit', () => {
   })
 
   it('is lowered by the polish from the best cell of the scan', () => {
-    const best = localMinima(scan(points, 1980, scanPeriods(90, 15), () => undefined))[0]!
+    const best = localMinima(scan(points, 1980, coarseGrid(90, 15), () => undefined))[0]!
     const polished = polish(orbit, startOf(best), 40, 1e-9)
     expect(polished.chiSquare).toBeLessThan(best.chiSquare)
     expect(polished.hasSettled).toBe(true)
