@@ -1,10 +1,12 @@
-import type { Element, FitResult } from '../../fitting/types'
+import type { Element, FitResult, HonestArc } from '../../fitting/types'
+import { formatNumber } from '../../shared/units/number-text'
 import { formatElement, formatValueAndSigma, withUnit } from '../../shared/units/value-and-sigma'
 
 /** One line of what an edition says, for lists and mail: "P 62.41 ± 0.38 yr, e 0.482, a 0.861″". */
 export function editionSummary(result: FitResult): string {
   if (result.model === 'line') return 'Motion so far straight'
   if (result.model === 'still') return 'No motion so far'
+  if (result.kind === 'equatorial') return solarSummary(result)
   const parts = result.kind === 'plane' ? planeParts(result) : pairParts(result)
   return parts.filter(part => part !== null).join(', ') || (result.conic?.statement ?? result.stop.sentence)
 }
@@ -15,6 +17,23 @@ function pairParts({ elements }: FitResult): (string | null)[] {
     said('e', elements.eccentricity, formatAlone),
     said('a', elements.semiMajorAxis, formatAlone),
   ]
+}
+
+/** "q 0.8841 ± 0.0006 au, e 0.9987 ± 0.0021, parabola not excluded; honest over its 41-day arc". */
+function solarSummary({ elements, conic, honestArc }: FitResult): string {
+  const parts = [
+    said('q', elements.perihelionDistance, formatElement),
+    said('e', elements.eccentricity, formatElement),
+    conic?.parabolaExcluded === false && conic.class !== 'parabola' ? 'parabola not excluded' : null,
+  ]
+  const line = parts.filter(part => part !== null).join(', ')
+  return honestArc ? `${line}; ${arcWords(honestArc)}` : line
+}
+
+function arcWords({ days, standing }: HonestArc): string {
+  const arc = `${formatNumber(days, days < 10 ? 1 : 0)}-day arc`
+  if (standing === 'perturbed') return `with the planets over its ${arc}`
+  return standing === 'honest' ? `honest over its ${arc}` : `its ${arc} is too long for the Sun alone`
 }
 
 function planeParts({ elements }: FitResult): (string | null)[] {

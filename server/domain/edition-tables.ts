@@ -1,11 +1,11 @@
-import type { FitRequest, PlaneMeasure, Prediction, RelativeMeasure } from '../../fitting/types'
+import type { FitRequest, Kind, Prediction } from '../../fitting/types'
 import { writeCsv } from '../../shared/csv/write-csv'
 import type { CsvColumn } from '../../shared/csv/write-csv'
 import type { EditionSnapshot } from '../../shared/schemas/editions'
 import type { FitMeasureView } from '../../shared/schemas/fits'
 import { elementFamily, labelledElements } from '../../shared/units/element-labels'
 
-type MeasureRow = FitMeasureView & { target: string; asked: RelativeMeasure | PlaneMeasure | undefined }
+type MeasureRow = FitMeasureView & { target: string; asked: FitRequest['measures'][number] | undefined }
 
 const RELATIVE_COLUMNS: readonly CsvColumn<MeasureRow>[] = [
   { name: 'target', cell: row => row.target },
@@ -41,6 +41,30 @@ const PLANE_COLUMNS: readonly CsvColumn<MeasureRow>[] = [
   { name: 'remarks', cell: row => row.remarks },
 ]
 
+const EQUATORIAL_COLUMNS: readonly CsvColumn<MeasureRow>[] = [
+  { name: 'target', cell: row => row.target },
+  { name: 'time_utc', cell: row => row.timeUtc },
+  { name: 'ra_deg', cell: row => row.sky?.raDeg },
+  { name: 'dec_deg', cell: row => row.sky?.decDeg },
+  { name: 'station', cell: row => row.sky?.station },
+  // A known station is found again by its code; coordinates beside it would be taken instead.
+  { name: 'lon_deg', cell: row => (row.sky && 'latitudeDeg' in row.sky.site ? row.sky.site.longitudeEastDeg : null) },
+  { name: 'lat_deg', cell: row => (row.sky && 'latitudeDeg' in row.sky.site ? row.sky.site.latitudeDeg : null) },
+  { name: 'height_m', cell: row => (row.sky && 'latitudeDeg' in row.sky.site ? row.sky.site.heightM : null) },
+  { name: 'sigma_ra_cosdec_arcsec', cell: row => row.sky?.sigmaRaCosDecArcsec },
+  { name: 'sigma_dec_arcsec', cell: row => row.sky?.sigmaDecArcsec },
+  { name: 'corr_ra_dec', cell: row => row.sky?.correlation },
+  { name: 'sigma_time_s', cell: row => row.sky?.sigmaTimeS },
+  { name: 'star_catalogue', cell: row => row.sky?.starCatalogue },
+  { name: 'tracklet', cell: row => row.sky?.tracklet },
+  { name: 'mag', cell: row => row.sky?.mag },
+  { name: 'band', cell: row => row.sky?.band },
+  { name: 'observer', cell: row => row.observer },
+  { name: 'remarks', cell: row => row.remarks },
+]
+
+const COLUMNS: Record<Kind, readonly CsvColumn<MeasureRow>[]> = { relative: RELATIVE_COLUMNS, equatorial: EQUATORIAL_COLUMNS, plane: PLANE_COLUMNS }
+
 /**
  * The measures that the edition stands on, by the canonical columns of the upload: the fit command reads the file back and finds
  * the same orbit. What was set aside is another table, so that nobody fits it by mistake.
@@ -59,10 +83,9 @@ export function setAsideCsv(snapshot: EditionSnapshot): string {
 
 function measureTable(snapshot: EditionSnapshot, measures: readonly FitMeasureView[], more: readonly CsvColumn<MeasureRow>[]): string {
   // Read back from our own snapshot, whose request is the engine's.
-  const asked = new Map((snapshot.request as FitRequest).measures.map(measure => [measure.id, measure as RelativeMeasure | PlaneMeasure]))
+  const asked = new Map((snapshot.request as FitRequest).measures.map(measure => [measure.id, measure] as const))
   const rows = measures.map(measure => ({ ...measure, target: snapshot.target.name, asked: asked.get(measure.id) }))
-  const columns = snapshot.target.kind === 'plane' ? PLANE_COLUMNS : RELATIVE_COLUMNS
-  return writeCsv([...withoutEmpty(columns, rows), ...more], rows)
+  return writeCsv([...withoutEmpty(COLUMNS[snapshot.target.kind], rows), ...more], rows)
 }
 
 /** A column in which no measure has anything is left out; without any measure all stay, as a heading. */
@@ -81,21 +104,33 @@ function quadrantOf({ asked }: MeasureRow): string | null {
 }
 
 /** What is predicted, in reading order; canonical JSON keeps its keys by the alphabet. */
-const PREDICTED = ['thetaDeg', 'rhoArcsec', 'eastArcsec', 'northArcsec', 'r'] as const
+const PREDICTED = [
+  'thetaDeg', 'rhoArcsec', 'eastArcsec', 'northArcsec', 'r',
+  'raDeg', 'decDeg', 'errorMajorArcsec', 'errorMinorArcsec', 'errorPositionAngleDeg', 'distanceAu', 'sunDistanceAu', 'elongationDeg',
+  'phaseAngleDeg', 'raCosDecRateArcsecPerMin', 'decRateArcsecPerMin', 'motionArcsecPerMin', 'motionPositionAngleDeg',
+] as const
+const PLACE: Record<Kind, string> = { relative: 'julian_year', equatorial: 'jd_tt', plane: 'phi_deg' }
+const CORRELATED = { thetaDeg: 'corr_theta_rho', raDeg: 'corr_ra_dec' } as const
 
-/** The predictions with their errors: over Julian years for a pair, over φ in the plane of the orbit. */
+/** The predictions with their errors: over Julian years for a pair, over dates for a comet, over φ in the plane of the orbit. */
 export function ephemerisCsv(snapshot: EditionSnapshot): string {
-  const given = new Set(snapshot.predictions.flatMap(prediction => Object.keys(prediction.values)))
-  const names = PREDICTED.filter(name => given.has(name))
+  const names = namesIn(snapshot.predictions.map(prediction => prediction.values))
+  const withSigma = new Set<string>(snapshot.target.kind === 'equatorial' ? namesIn(snapshot.predictions.map(prediction => prediction.sigmas)) : names)
+  const correlated = (['thetaDeg', 'raDeg'] as const).filter(name => names.includes(name))
   const columns: CsvColumn<Prediction>[] = [
-    { name: snapshot.target.kind === 'plane' ? 'phi_deg' : 'julian_year', cell: prediction => prediction.at },
+    { name: PLACE[snapshot.target.kind], cell: prediction => prediction.at },
     ...names.flatMap(name => [
       { name: snakeCase(name), cell: (prediction: Prediction) => prediction.values[name] },
-      { name: `sigma_${snakeCase(name)}`, cell: (prediction: Prediction) => prediction.sigmas[name] },
+      ...(withSigma.has(name) ? [{ name: `sigma_${snakeCase(name)}`, cell: (prediction: Prediction) => prediction.sigmas[name] }] : []),
     ]),
-    ...(names.includes('thetaDeg') ? [{ name: 'corr_theta_rho', cell: (prediction: Prediction) => prediction.correlation }] : []),
+    ...correlated.map(name => ({ name: CORRELATED[name], cell: (prediction: Prediction) => prediction.correlation })),
   ]
   return writeCsv(columns, snapshot.predictions)
+}
+
+/** The names under which any of these has a number. */
+function namesIn(lists: readonly Record<string, number | null>[]): (typeof PREDICTED)[number][] {
+  return PREDICTED.filter(name => lists.some(list => typeof list[name] === 'number'))
 }
 
 /** The elements with their errors: the published one, the formal one and the scaled one. */

@@ -42,6 +42,10 @@ export function changeInSigma(older: FitResult, newer: FitResult): Record<string
       change[name] = null
       continue
     }
+    if (name === 'meanAnomaly' && older.epochOfElements !== newer.epochOfElements) {
+      change[name] = null // of two dates: not to be compared
+      continue
+    }
     const moved = difference(name, older, newer)
     const variance = isNested ? from.sigma ** 2 - to.sigma ** 2 : from.sigma ** 2 + to.sigma ** 2
     if (moved === 0) change[name] = 0

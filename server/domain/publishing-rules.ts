@@ -13,6 +13,8 @@ export interface PublishingCase {
   observersUsed: number
   /** How much of a turn the measures cover; null where nothing says. */
   arcTurns: number | null
+  /** Why no edition can stand on this result whatever the programme asks for, in sentences. */
+  hindrances: string[]
   /** Coordinators other than the one who accepted, who gave their consent. */
   consents: number
 }
@@ -25,13 +27,28 @@ export function publishingCase(result: FitResult, consents: number): PublishingC
     measuresUsed: used,
     observersUsed: byObserver.filter(o => o.measures > 0).length,
     arcTurns: arc.turns ?? (coveredDeg === null ? null : coveredDeg / 360),
+    hindrances: hindrancesOf(result),
     consents,
   }
 }
 
+/** An orbit about the Sun is published over the arc for which its motion is honest, and only where measures test it. */
+function hindrancesOf({ kind, honestArc, statistics, alternatives }: FitResult): string[] {
+  if (kind !== 'equatorial') return []
+  const hindrances: string[] = []
+  if (honestArc && (honestArc.standing === 'strained' || honestArc.standing === 'needs-perturbations')) {
+    hindrances.push(`${honestArc.statement} No edition goes past the arc for which its motion is honest: ask for a fit with the planets, or set measures aside until the arc is short enough.`)
+  }
+  if (statistics.degreesOfFreedom < 1) {
+    const others = alternatives.length > 0 ? `, and ${alternatives.length === 1 ? 'another orbit passes' : `${alternatives.length} other orbits pass`} through them as well` : ''
+    hindrances.push(`Nothing tests this orbit: it passes through every measure by construction${others}. At least one measure more is needed.`)
+  }
+  return hindrances
+}
+
 /** The rules of the programme that are not met, each in a sentence; empty where publishing is open. */
 export function unmetRules(rules: PublishingRules, found: PublishingCase): string[] {
-  const unmet: string[] = []
+  const unmet = [...found.hindrances]
   if (found.measuresUsed < rules.leastMeasures) {
     unmet.push(`The programme asks for at least ${rules.leastMeasures} measures; ${found.measuresUsed} are used here.`)
   }

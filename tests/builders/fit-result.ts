@@ -1,4 +1,4 @@
-import type { Element, FitResult, Residual } from '../../fitting/types'
+import type { Element, FitResult, Kind, Residual } from '../../fitting/types'
 
 /** A number with one error in all three places. */
 export function element(value: number, sigma: number | null, unit: string): Element {
@@ -31,6 +31,21 @@ export function planeResult(values: Partial<Record<string, Element>> = {}, rest:
   return { ...bareResult('plane'), elements, ...rest }
 }
 
+/** A finished fit of a comet about the Sun. */
+export function solarResult(values: Partial<Record<string, Element>> = {}, rest: Partial<FitResult> = {}): FitResult {
+  const elements = withoutUndefined({
+    perihelionDistance: element(0.88412, 0.00062, 'au'),
+    eccentricity: element(0.9987, 0.0021, ''),
+    inclination: element(64.21, 0.03, 'deg'),
+    node: element(211.4, 0.05, 'deg'),
+    argumentOfPerihelion: element(118.2, 0.11, 'deg'),
+    perihelionTime: element(2461158.314, 0.021, 'JD TT'),
+    ...values,
+  })
+  const honestArc = { days: 41.2, honestUntilDays: 60, standing: 'honest' as const, statement: 'The arc of 41 days lies within the 60 days.' }
+  return { ...bareResult('equatorial'), elements, honestArc, epochOfElements: 2461120.5, frame: 'ecliptic and equinox of J2000', ...rest }
+}
+
 /** A residual of a measure that was used and sits where the fit puts it, unless said otherwise. */
 export function residual(id: string, computed: Record<string, number>, rest: Partial<Residual> = {}): Residual {
   return {
@@ -39,7 +54,7 @@ export function residual(id: string, computed: Record<string, number>, rest: Par
   }
 }
 
-function bareResult(kind: 'relative' | 'plane'): FitResult {
+function bareResult(kind: Kind): FitResult {
   return {
     format: 1,
     kind,

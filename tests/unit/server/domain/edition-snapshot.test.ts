@@ -63,6 +63,14 @@ describe('predictionPlaces', () => {
     expect([directions[0], directions[35]]).toEqual([0, 350])
   })
 
+  it('gives every second day of forty and every thirtieth of a year, from the day after publication, for a body that moves', () => {
+    const dates = predictionPlaces('equatorial', '2026-03-14T20:51:00.000Z')
+    expect(dates.slice(0, 3)).toEqual([2461114.5, 2461116.5, 2461118.5])
+    expect(dates[20]! - dates[0]!).toBe(40)
+    expect(dates.slice(21, 23).map(at => at - dates[0]!)).toEqual([70, 100])
+    expect(dates.at(-1)! - dates[0]!).toBe(370)
+  })
+
   it('keeps no prediction where an open conic has none', () => {
     expect(isOnTheCurve({ at: 180, values: {}, sigmas: {}, correlation: null })).toBe(false)
     expect(isOnTheCurve({ at: 0, values: { r: 1 }, sigmas: { r: null }, correlation: null })).toBe(true)

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { editionSummary } from '../../../../server/domain/edition-summary'
-import { element, pairResult, planeResult } from '../../../builders/fit-result'
+import { element, pairResult, planeResult, solarResult } from '../../../builders/fit-result'
 
 describe('editionSummary', () => {
   it('gives period, eccentricity and semi-major axis of a pair', () => {
@@ -17,5 +17,12 @@ describe('editionSummary', () => {
 
   it('leaves out what was not determined', () => {
     expect(editionSummary(planeResult({ periapsisDirection: undefined, semiLatusRectum: element(1.5, null, 'unit') }))).toBe('e 0.01650 ± 0.00090, p 1.5 unit')
+  })
+
+  it('says of an orbit about the Sun whether it is bound, and over which arc it is honest', () => {
+    const open = { class: 'ellipse' as const, semiLatusRectum: element(1.767, 0.001, 'au'), eccentricity: element(0.9987, 0.0021, ''), probabilityBound: 0.7, parabolaExcluded: false, circleExcluded: true, statement: '' }
+    const { honestArc } = solarResult()
+    expect(editionSummary(solarResult({}, { conic: open }))).toBe('q 0.88412 ± 0.00062 au, e 0.9987 ± 0.0021, parabola not excluded; honest over its 41-day arc')
+    expect(editionSummary(solarResult({}, { conic: { ...open, parabolaExcluded: true }, honestArc: { ...honestArc!, standing: 'perturbed' } }))).toMatch(/ ± 0\.0021; with the planets over its 41-day arc$/)
   })
 })

@@ -52,3 +52,32 @@ describe('the tables of results', () => {
     ])
   })
 })
+
+describe('the tables of a comet', () => {
+  const sky = {
+    raDeg: 41.708625, decDeg: -0.215972, sigmaRaCosDecArcsec: 0.5, sigmaDecArcsec: 0.4, correlation: 0.1, sigmaTimeS: 0.2, station: '910',
+    site: { longitudeEastDeg: 6.9267, rhoCosPhi: 0.72368, rhoSinPhi: 0.68811 }, starCatalogue: null, tracklet: 'a1', mag: 14.1, band: 'G',
+  }
+  const known = snapshotMeasure('known', { timeUtc: '2026-03-14T20:51:07.500Z', epochYr: 2026.2, sky })
+  const placed = snapshotMeasure('placed', { timeUtc: '2026-03-15T20:51:07.500Z', epochYr: 2026.2, sky: { ...sky, station: 'hill', site: { longitudeEastDeg: 10.9, latitudeDeg: 50.7, heightM: 500 } } })
+  const base = pairSnapshot([known, placed])
+  const comet = { ...base, target: { ...base.target, kind: 'equatorial' as const } }
+
+  it('give measures that the upload reads back, a known station by its code and another by its place', () => {
+    const { rows, fileProblems } = readMeasures(measuresCsv(comet), { kind: 'equatorial' })
+    expect([...fileProblems, ...rows.flatMap(row => row.problems)]).toEqual([])
+    const { station: _station, ...rest } = sky
+    expect(rows.map(row => row.parsed)).toMatchObject([
+      { ...rest, stationText: '910', timeUtc: '2026-03-14T20:51:07.500Z' },
+      { stationText: 'hill', site: { longitudeEastDeg: 10.9, latitudeDeg: 50.7, heightM: 500 } },
+    ])
+  })
+
+  it('give predictions over Julian dates, with σ only of what has one', () => {
+    const prediction = { at: 2461114.5, values: { raDeg: 41.7, decDeg: -0.2, distanceAu: 0.9, elongationDeg: 71 }, sigmas: { raDeg: 1e-4, decDeg: 1e-4, distanceAu: 1e-3, elongationDeg: null }, correlation: 0.3 }
+    expect(ephemerisCsv({ ...comet, predictions: [prediction] }).trimEnd().split('\r\n')).toEqual([
+      'jd_tt,ra_deg,sigma_ra_deg,dec_deg,sigma_dec_deg,distance_au,sigma_distance_au,elongation_deg,corr_ra_dec',
+      '2461114.5,41.7,0.0001,-0.2,0.0001,0.9,0.001,71,0.3',
+    ])
+  })
+})
