@@ -282,6 +282,7 @@ export interface FitTable {
   refusal: string | null
   created_at: string
   finished_at: string | null
+  headline: Generated<string | null>
 }
 
 export interface FitMeasureTable {

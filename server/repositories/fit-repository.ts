@@ -5,14 +5,25 @@ import { notFound } from '../errors/app-error'
 import type { Reads, Tx } from './connection'
 
 export type FitRecord = Selectable<FitTable> & { requested_by_name: string | null; new_measures: number }
+/** A fit as lists need it: without its request and its result, which may hold megabytes. */
+export type FitLine = Omit<FitRecord, 'request' | 'result'>
 export type NewFitMeasure = Insertable<FitMeasureTable>
 export type FitStateName = FitTable['state']
 
+const LINE_COLUMNS = [
+  'fit.id', 'fit.target_id', 'fit.number', 'fit.state', 'fit.version', 'fit.requested_by', 'fit.cause', 'fit.input_hash', 'fit.engine_version',
+  'fit.seed', 'fit.base_fit_id', 'fit.refusal', 'fit.created_at', 'fit.finished_at', 'fit.headline',
+] as const
+
 function fits(reads: Reads) {
+  return fitLines(reads).select(['fit.request', 'fit.result'])
+}
+
+function fitLines(reads: Reads) {
   return reads
     .selectFrom('fit')
     .leftJoin('person', 'person.id', 'fit.requested_by')
-    .selectAll('fit')
+    .select(LINE_COLUMNS)
     .select('person.display_name as requested_by_name')
     .select(sql<number>`(SELECT count(*) FROM fit_measure m WHERE m.fit_id = fit.id AND m.is_new = 1)`.as('new_measures'))
 }
@@ -46,17 +57,17 @@ export async function listFitsOfInput(reads: Reads, input: { targetId: string; i
     .execute()
 }
 
-export async function listFitsOfTarget(reads: Reads, targetId: string): Promise<FitRecord[]> {
-  return fits(reads).where('fit.target_id', '=', targetId).orderBy('fit.number', 'desc').execute()
+export async function listFitsOfTarget(reads: Reads, targetId: string): Promise<FitLine[]> {
+  return fitLines(reads).where('fit.target_id', '=', targetId).orderBy('fit.number', 'desc').execute()
 }
 
-export async function listFitsInStates(reads: Reads, targetId: string, states: readonly FitStateName[]): Promise<FitRecord[]> {
-  return fits(reads).where('fit.target_id', '=', targetId).where('fit.state', 'in', [...states]).orderBy('fit.number', 'desc').execute()
+export async function listFitsInStates(reads: Reads, targetId: string, states: readonly FitStateName[]): Promise<FitLine[]> {
+  return fitLines(reads).where('fit.target_id', '=', targetId).where('fit.state', 'in', [...states]).orderBy('fit.number', 'desc').execute()
 }
 
 /** The newest fit of each target. */
-export async function listLatestFits(reads: Reads, targetIds: readonly string[]): Promise<FitRecord[]> {
-  return fits(reads)
+export async function listLatestFits(reads: Reads, targetIds: readonly string[]): Promise<FitLine[]> {
+  return fitLines(reads)
     .where(sql<boolean>`fit.target_id IN (SELECT value FROM json_each(${JSON.stringify(targetIds)}))`)
     .where(sql<boolean>`fit.number = (SELECT max(f.number) FROM fit f WHERE f.target_id = fit.target_id)`)
     .execute()

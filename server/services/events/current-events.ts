@@ -1,7 +1,7 @@
 import type { StreamEvent } from '#shared/schemas/events'
 import type { Reads } from '../../context/context'
 import { findFit, listLatestFits } from '../../repositories/fit-repository'
-import type { FitRecord } from '../../repositories/fit-repository'
+import type { FitLine } from '../../repositories/fit-repository'
 import { findLatestJobByKey } from '../../repositories/job-repository'
 import { jobKeyOf } from '../fits/job-key'
 
@@ -17,7 +17,7 @@ export async function currentFitEvents(reads: Reads, topic: string): Promise<Str
   return [state, { topic, name: 'fit.progress', data: { ...about, fraction: job.progress_fraction, stage: job.progress_stage } }]
 }
 
-async function fitOfTopic(reads: Reads, topic: string): Promise<FitRecord | undefined> {
+async function fitOfTopic(reads: Reads, topic: string): Promise<FitLine | undefined> {
   const [kind, id = ''] = topic.split(':')
   if (kind === 'fit') return findFit(reads, id)
   if (kind === 'target') return (await listLatestFits(reads, [id]))[0]

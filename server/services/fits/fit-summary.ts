@@ -1,9 +1,15 @@
 import type { FitOutcome, FitResult, Refusal } from '../../../fitting/types'
 import type { FitSummary } from '#shared/schemas/fits'
-import type { FitRecord } from '../../repositories/fit-repository'
+import type { FitLine, FitRecord } from '../../repositories/fit-repository'
 
+const readResults = new WeakMap<object, FitResult>()
+
+/** The result of a fit, read from its text once for each record: of ten thousand measures it holds megabytes. */
 export function resultOf(fit: Pick<FitRecord, 'result'>): FitResult | null {
-  return fit.result === null ? null : (JSON.parse(fit.result) as FitResult)
+  if (fit.result === null) return null
+  const result = readResults.get(fit) ?? (JSON.parse(fit.result) as FitResult)
+  readResults.set(fit, result)
+  return result
 }
 
 export function refusalOf(fit: Pick<FitRecord, 'refusal'>): Refusal | null {
@@ -24,7 +30,7 @@ export function headlineOf(result: FitResult | null, refusal: Refusal | null): s
   return refusal?.sentence ?? null
 }
 
-export function fitSummary(fit: FitRecord): FitSummary {
+export function fitSummary(fit: FitLine): FitSummary {
   return {
     id: fit.id,
     number: fit.number,
@@ -34,6 +40,6 @@ export function fitSummary(fit: FitRecord): FitSummary {
     finishedAt: fit.finished_at,
     requestedBy: fit.requested_by_name,
     newMeasures: fit.new_measures,
-    headline: headlineOf(resultOf(fit), refusalOf(fit)),
+    headline: fit.headline,
   }
 }

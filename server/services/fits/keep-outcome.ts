@@ -23,18 +23,18 @@ export async function keepOutcome(ctx: Context, { fitId, lease, outcome }: { fit
 /** Writes an outcome onto a fit that has none, in the caller's transaction. */
 export async function settleComputed(tx: Tx, ctx: Context, fit: FitRecord, outcome: FitOutcome): Promise<void> {
   const finished_at = ctx.clock.now()
+  const headline = outcome.ok ? headlineOf(outcome.result, null) : headlineOf(null, outcome.refusal)
   const subject = { subjectKind: 'fit', subjectId: fit.id, targetId: fit.target_id } as const
   if (outcome.ok) {
-    await updateFitIn(tx, fit.id, fit.state, { state: 'done', result: JSON.stringify(outcome.result), finished_at })
+    await updateFitIn(tx, fit.id, fit.state, { state: 'done', result: JSON.stringify(outcome.result), headline, finished_at })
     await recordAudit(tx, ctx, {
       ...subject, event: 'fit.done', detail: { number: fit.number, inputHash: fit.input_hash, engineVersion: fit.engine_version },
     })
   }
   else {
-    await updateFitIn(tx, fit.id, fit.state, { state: 'failed', refusal: JSON.stringify(outcome.refusal), finished_at })
+    await updateFitIn(tx, fit.id, fit.state, { state: 'failed', refusal: JSON.stringify(outcome.refusal), headline, finished_at })
     await recordAudit(tx, ctx, { ...subject, event: 'fit.failed', detail: { number: fit.number, refusal: outcome.refusal.code } })
   }
-  const headline = outcome.ok ? headlineOf(outcome.result, null) : headlineOf(null, outcome.refusal)
   await tellWaiting(tx, ctx, fit, { headline: headline ?? '', hasFailed: !outcome.ok })
   announceFit(ctx, { fitId: fit.id, targetId: fit.target_id, state: outcome.ok ? 'done' : 'failed' })
 }

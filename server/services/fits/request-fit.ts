@@ -7,7 +7,7 @@ import { recordAudit } from '../../audit/record-audit'
 import { inputInvalid, notFound, wrongState } from '../../errors/app-error'
 import { listFitMeasures } from '../../repositories/fit-content-repository'
 import { getFit, listFitsInStates } from '../../repositories/fit-repository'
-import type { FitRecord } from '../../repositories/fit-repository'
+import type { FitLine } from '../../repositories/fit-repository'
 import { listStandingMeasureIds } from '../../repositories/measure-repository'
 import { findTarget } from '../../repositories/target-repository'
 import { SETTLED_FIT_STATES } from '../../domain/fit-state'
@@ -43,7 +43,7 @@ async function setAsidesBefore(tx: Tx, targetId: string, baseFitId: string | nul
   return new Map(rows.filter(row => row.role === 'set-aside').map(row => [row.measure_id, { reason: row.reason!, decidedBy: row.decided_by }]))
 }
 
-async function baseFit(tx: Tx, targetId: string, baseFitId: string | null): Promise<FitRecord | null> {
+async function baseFit(tx: Tx, targetId: string, baseFitId: string | null): Promise<FitLine | null> {
   if (baseFitId === null) return (await listFitsInStates(tx, targetId, SETTLED_FIT_STATES))[0] ?? null
   const fit = await getFit(tx, baseFitId)
   if (fit.target_id !== targetId) throw inputInvalid([{ path: 'baseFitId', reason: 'is a fit of another target' }])

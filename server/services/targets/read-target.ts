@@ -7,7 +7,7 @@ import type { Context, Reads } from '../../context/context'
 import { notFound } from '../../errors/app-error'
 import { listEditionsOfTarget } from '../../repositories/edition-repository'
 import { listFitsOfTarget } from '../../repositories/fit-repository'
-import type { FitRecord } from '../../repositories/fit-repository'
+import type { FitLine } from '../../repositories/fit-repository'
 import { isFollowing } from '../../repositories/follow-repository'
 import { listStandingMeasures } from '../../repositories/measure-repository'
 import { findTargetOverview, listTargetNames } from '../../repositories/target-repository'
@@ -52,7 +52,7 @@ export async function viewTarget(ctx: Context, reads: Reads, targetId: string, f
  * The fit asked for (one of another target is none of this one's), else the newest that waits or was accepted, else the newest:
  * what was superseded or declined is looked at by asking for it.
  */
-async function shownFit(ctx: Context, reads: Reads, fits: readonly FitRecord[], fitId: string | null): Promise<FitView | null> {
+async function shownFit(ctx: Context, reads: Reads, fits: readonly FitLine[], fitId: string | null): Promise<FitView | null> {
   if (fitId !== null && !fits.some(fit => fit.id === fitId)) throw notFound()
   const shown = fitId ?? (fits.find(fit => fit.state !== 'superseded' && fit.state !== 'declined') ?? fits[0])?.id
   return shown === undefined ? null : viewFit(ctx, reads, shown)

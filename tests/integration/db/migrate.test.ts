@@ -65,3 +65,30 @@ test('a migration that leaves a row without its parent is undone', async () => {
   expect(database.prepare('SELECT count(*) AS count FROM parent').get()).toEqual({ count: 2 })
   database.close()
 })
+
+test('fits that were there before keep what they said, as a line of their own', async () => {
+  const upTo = (last: string) => Object.fromEntries(Object.entries(migrations).filter(([name]) => name <= last))
+  await migrateToLatest(file, upTo('2026-12-01T1530_index_long_lists'))
+  const database = new Sqlite(file)
+  database.pragma('foreign_keys = OFF')
+  const insert = database.prepare(`INSERT INTO fit (id, target_id, number, state, cause, request, input_hash, engine_version, seed, result, refusal, created_at)
+    VALUES (?, ?, ?, 'superseded', 'refit', '{}', ?, '1', 1, ?, ?, '2026-12-01T09:00:00.000Z')`)
+  database.exec(`INSERT INTO programme (id, name, created_at) VALUES ('${'p'.repeat(26)}', 'Northern pairs', '2026-12-01T09:00:00.000Z');
+    INSERT INTO target (id, programme_id, kind, name, created_at) VALUES ('${'t'.repeat(26)}', '${'p'.repeat(26)}', 'relative', 'Linden 12 AB', '2026-12-01T09:00:00.000Z')`)
+  const said = [
+    { conic: { statement: 'Ellipse' }, stop: { sentence: 'Converged.' } },
+    { conic: null, stop: { sentence: 'Converged.' } },
+    null,
+    null,
+  ]
+  for (const [i, result] of said.entries()) {
+    const refusal = i === 2 ? JSON.stringify({ sentence: 'Too few measures.' }) : null
+    insert.run(String.fromCharCode(97 + i).repeat(26), 't'.repeat(26), i + 1, 'f'.repeat(64), result && JSON.stringify(result), refusal)
+  }
+  database.close()
+
+  expect(await migrateToLatest(file, upTo('2026-12-01T1550_add_headline'))).toEqual(['2026-12-01T1550_add_headline'])
+  const after = new Sqlite(file)
+  expect(after.prepare('SELECT headline FROM fit ORDER BY number').pluck().all()).toEqual(['Ellipse', 'Converged.', 'Too few measures.', null])
+  after.close()
+})
