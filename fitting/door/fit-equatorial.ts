@@ -94,6 +94,12 @@ function settleAll(sightings: Sightings, states: DatedState[], options: SettleOp
   return settled
 }
 
+/** Forces where none are asked for: no planets where the measures fit no orbit anyway. */
+function forcesOf(sunSettled: SettledSights[], sightings: Sightings, days: number, isHopeless: boolean): Forces {
+  if (isHopeless) return 'sun'
+  return defaultForces(days, sunSettled.length > 0 ? nearestDistance(sunSettled[0]!, sightings) : Infinity)
+}
+
 /** χ² with e = 1 held, from the nearest parabola; null where there is none. */
 function parabolaChiSquare(best: SettledSights, sightings: Sightings, forces: Forces): number | null {
   const [parabola] = settleSights(sightings.used, [stateOf(best)], middleReference(sightings.used), { forces, isParabola: true })
@@ -115,10 +121,11 @@ export function fitEquatorial(request: EquatorialRequest): FitResult {
   const { used } = sightings
   const days = used[used.length - 1]!.jdTt - used[0]!.jdTt
   const followForces = settings.forces ?? defaultForces(days, Infinity)
-  const states = start ? [startState(start)] : firstStates(used, followForces, (part) => report('searching', part)).slice(0, used.length === LEAST_MEASURES ? undefined : FOLLOWED)
+  const first = start ? { states: [startState(start)], isHopeless: false } : firstStates(used, followForces, (part) => report('searching', part))
+  const states = first.states.slice(0, used.length === LEAST_MEASURES ? undefined : FOLLOWED)
   const isParabola = settings.conicClass === 'parabola'
   const sunSettled = settleSights(used, states, middleReference(used), { forces: 'sun', isParabola: false })
-  const forces = settings.forces ?? (sunSettled.length > 0 ? defaultForces(days, nearestDistance(sunSettled[0]!, sightings)) : followForces)
+  const forces = settings.forces ?? forcesOf(sunSettled, sightings, days, first.isHopeless)
   report('polishing', 0.3)
   const settled = settleAll(sightings, forces === 'sun' && !isParabola && sunSettled.length > 0 ? sunSettled.map(stateOf) : states, { forces, isParabola })
   if (settled.length === 0) refuse('no-orbit-found', 'No orbit about the Sun passes near these directions.', 'Check times, positions and stations; leave doubtful measures out.')
@@ -126,7 +133,7 @@ export function fitEquatorial(request: EquatorialRequest): FitResult {
   report('polishing', 1)
   const result = judgeEquatorial({
     settled, sightings, settings, forces, days, nearestAu: nearestDistance(settled[0]!, sightings),
-    parabolaChiSquare: isParabola ? null : parabolaChiSquare(settled[0]!, sightings, forces),
+    parabolaChiSquare: () => parabolaChiSquare(settled[0]!, sightings, forces),
   })
   report('judging', 1)
   return result

@@ -1,12 +1,20 @@
 /** The door: one request in, a result or a refusal out. */
-import type { FitOutcome, FitRequest, Progress } from '../types'
+import { KINDS, type FitOutcome, type FitRequest, type FitResult, type FitSettings, type Progress } from '../types'
+import { fitEquatorial } from './fit-equatorial'
 import { fitPlane } from './fit-plane'
 import { fitRelative } from './fit-relative'
-import { progressReport } from './progress'
+import { progressReport, type Report } from './progress'
 import { refuse, RefusedRequest } from './refusal'
 import { validateList } from './validate-measures'
 import { validateSettings } from './validate-settings'
 import { validateStart } from './validate-start'
+
+function fitByKind(request: FitRequest, settings: FitSettings, report: Report): FitResult {
+  const { start } = request
+  if (request.kind === 'relative') return fitRelative({ measures: request.measures, settings, start, report })
+  if (request.kind === 'equatorial') return fitEquatorial({ measures: request.measures, settings, start, report })
+  return fitPlane({ measures: request.measures, settings, start, report })
+}
 
 /**
  * Fits an orbit. Synchronous, without a clock and without random numbers beyond the seed: the same request gives the same result to
@@ -21,17 +29,11 @@ export function fitOrbit(request: FitRequest, onProgress?: (progress: Progress) 
   try {
     const report = progressReport(onProgress)
     const settings = request.settings ?? {}
-    if (request.kind === 'equatorial') {
-      refuse('kind-not-available', 'Orbits of comets and minor planets are not fitted yet: they are coming with the next engine.', 'Keep the measures; they can be fitted then.')
-    }
-    if (request.kind !== 'relative' && request.kind !== 'plane') refuse('kind-not-available', 'The kind of the request is not known.', 'Give relative or plane.')
+    if (!KINDS.includes(request.kind)) refuse('kind-not-available', 'The kind of the request is not known.', 'Give relative, equatorial or plane.')
     validateList(request.measures)
     validateSettings(request.kind, settings)
     validateStart(request.kind, request.start)
-    const result = request.kind === 'relative'
-      ? fitRelative({ measures: request.measures, settings, start: request.start, report })
-      : fitPlane({ measures: request.measures, settings, start: request.start, report })
-    return { ok: true, result }
+    return { ok: true, result: fitByKind(request, settings, report) }
   } catch (error) {
     if (error instanceof RefusedRequest) return { ok: false, refusal: error.refusal }
     throw error

@@ -25,13 +25,24 @@ export interface EquatorialJudgement {
   /** From the first to the last used measure, d. */
   days: number
   nearestAu: number
-  parabolaChiSquare: number | null
+  /** χ² with e = 1 held; null where there is no such orbit. Called only where a parabola is in question. */
+  parabolaChiSquare: () => number | null
 }
 
 const ALTERNATIVE_WITHIN = 9
 const ALTERNATIVES_AT_MOST = 8
+/** With e this many σ from 1 a parabola is out of the question, and none is fitted. */
+const PARABOLA_WITHIN_SIGMA = 30
 /** χ² below this passes through every measure. */
 const EXACT_BELOW = 1e-6
+
+/** χ² of the held parabola where e is not far from 1. */
+function parabolaOf({ parabolaChiSquare }: EquatorialJudgement, { settled, elements, errors }: Judged): number | null {
+  if (settled.orbit.reference.motion) return null
+  const { sigma } = elementOf(elements.quantities.eccentricity!, errors.covariance, errors.scale)
+  const isFar = sigma !== null && Math.abs(1 - elements.at.eccentricity) > PARABOLA_WITHIN_SIGMA * sigma
+  return isFar ? null : parabolaChiSquare()
+}
 
 interface Judged {
   settled: SettledSights
@@ -93,7 +104,7 @@ function statisticsOf(best: Judged, { sightings }: EquatorialJudgement, findings
  * @returns the result that leaves the door.
  */
 export function judgeEquatorial(judgement: EquatorialJudgement): FitResult {
-  const { settled, sightings, settings, forces, days, nearestAu, parabolaChiSquare } = judgement
+  const { settled, sightings, settings, forces, days, nearestAu } = judgement
   const best = judged(settled[0]!, sightings)
   const { orbit, solution } = best.settled
   const findings: MotionFindings = { orbit, values: solution.values, elements: best.elements, errors: best.errors, used: sightings.used }
@@ -105,7 +116,7 @@ export function judgeEquatorial(judgement: EquatorialJudgement): FitResult {
     byObserver: statisticsByObserver(residuals, sightings.all.map((sighting) => sighting.credit), Object.keys(SIGHT_UNITS)),
   }
   const scaleSquared = Math.max(1, partial.reducedChiSquare ?? 1)
-  const conic = equatorialConic(findings, { chiSquare: solution.chiSquare, parabolaChiSquare, scaleSquared: sightings.basis === 'formal' ? 1 : scaleSquared })
+  const conic = equatorialConic(findings, { chiSquare: solution.chiSquare, parabolaChiSquare: parabolaOf(judgement, best), scaleSquared: sightings.basis === 'formal' ? 1 : scaleSquared })
   const elements = publishedElements(best)
   const beside = standBeside(judgement, scaleSquared)
   const alternatives = beside.map((other): Alternative => ({

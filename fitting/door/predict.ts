@@ -6,6 +6,7 @@ import { linePath, stillPath } from '../models/relative-line'
 import type { SkyPath } from '../models/sky-path'
 import type { FitResult, FitState, Prediction } from '../types'
 import { quadraticForm } from '../uncertainty/error-scale'
+import { predictEquatorial } from './predict-equatorial'
 
 function pathOf(state: FitState): SkyPath {
   if (state.model === 'line') return linePath(state.referenceEpochYr)
@@ -65,7 +66,7 @@ function planePrediction(state: FitState, phiDeg: number): Prediction {
 /**
  * Predicts places from a result.
  * @param result of fitOrbit; only its kind and state are used.
- * @param at epochs, Julian years (relative), or directions φ, degrees (plane); finite.
+ * @param at epochs, Julian years (relative) or JD of TT (equatorial), or directions φ, degrees (plane); finite.
  * @returns one prediction each: θ, ρ, east, north with σ and the correlation of θ and ρ; or r with σ (empty where the conic does not
  * reach that direction).
  * @throws RangeError where an epoch or direction is not a finite number (a programmer's error).
@@ -73,6 +74,7 @@ function planePrediction(state: FitState, phiDeg: number): Prediction {
  */
 export function predict(result: Pick<FitResult, 'kind' | 'state'>, at: readonly number[]): Prediction[] {
   for (const value of at) if (!(value - value === 0)) throw new RangeError('predict: every epoch or direction must be a finite number.')
+  if (result.kind === 'equatorial') return predictEquatorial(result.state, at)
   if (result.kind === 'plane') return at.map((phiDeg) => planePrediction(result.state, phiDeg))
   const path = pathOf(result.state)
   path.prepare(result.state.values)

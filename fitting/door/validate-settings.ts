@@ -13,7 +13,7 @@ const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
 const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
   relative: ['model', 'loss', 'weights', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   plane: ['model', 'loss', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
-  equatorial: [],
+  equatorial: ['model', 'loss', 'weights', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
 }
 
 const CHOICES: Partial<Record<keyof FitSettings, readonly unknown[]>> = {
@@ -27,12 +27,17 @@ const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
 }
 
 /** Served models and weights of this engine version. */
-const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: [] }
+const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: ['kepler'] }
 const WEIGHTS: readonly string[] = ['stated', 'equal']
 
 /** The biweight is served for orbits of double stars only. */
 function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
   return loss === undefined || loss === 'squares' || (loss === 'biweight' && kind === 'relative' && (model ?? 'kepler') === 'kepler')
+}
+
+/** What equatorial fits serve beyond the defaults. */
+function isServedEquatorial(name: keyof FitSettings, value: unknown): boolean {
+  return name === 'forces' || (name === 'conicClass' && value === 'parabola')
 }
 
 function checkValue(name: keyof FitSettings, value: unknown): void {
@@ -61,7 +66,7 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
     if (name === 'hold') refuse('setting-not-available', 'Holding elements at given values is not available in this version of the engine.', LATER)
     if (!SERVED[kind].includes(name)) refuse('setting-not-available', `The setting ${String(name).slice(0, 40)} is not available for ${kind} fits.`, LATER)
     checkValue(name, value)
-    if (name in DEFAULT_ONLY && value !== DEFAULT_ONLY[name]) {
+    if (name in DEFAULT_ONLY && value !== DEFAULT_ONLY[name] && !(kind === 'equatorial' && isServedEquatorial(name, value))) {
       refuse('setting-not-available', `The setting ${name} = ${String(value)} is not available in this version of the engine.`, LATER)
     }
   }

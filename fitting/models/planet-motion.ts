@@ -17,9 +17,9 @@ const WHOLE = 42
 const FULL_STEP_BEYOND_AU = 0.8
 /** Where the second to fourth rates are taken. */
 const PARTS = [0.5, 0.5, 1] as const
-const SMALLEST_STEP_DAYS = 1 / 64
+const SMALLEST_STEP_DAYS = 1 / 32
 /** A motion is followed over at most so many steps to each side. */
-const MOST_STEPS = 40_000
+const MOST_STEPS = 20_000
 
 const planets = new Float64Array(3 * PLANET_GRAVITATION.length)
 const table = new PlanetTable()

@@ -18,6 +18,14 @@ const WHOLE_ARC_DAYS = 130
 const ROUND_EPOCH_BEYOND_DAYS = 2
 /** How many orbits of a part of the arc are followed to the whole. */
 const FOLLOWED = 4
+/** Beyond this scatter, in σ squared, of the best orbit of a short arc, the measures belong to no one body: nothing is followed further. */
+const HOPELESS_ABOVE = 1e8
+/** An integrated year costs milliseconds a step of the solver: so many steps in all years together, but no fewer than the least. */
+const INTEGRATED_YEARS = 60
+const LEAST_STEPS = 8
+const MOST_STEPS = 200
+/** Arcs longer than this are followed with the best orbit and one more only, d. */
+const LONG_ARC_DAYS = 700
 
 export interface SettledSights {
   orbit: EquatorialOrbit
@@ -61,6 +69,19 @@ function startFrom({ state, jdTt }: DatedState, reference: SightReference, optio
   return { orbit: equatorialOrbit(reference, options.forces), values: sightOfState(reference, there) }
 }
 
+/** Steps of the solver that this arc allows. */
+function stepsAllowed(sights: readonly Sight[], forces: Forces): number {
+  if (forces === 'sun') return MOST_STEPS
+  const years = (sights[sights.length - 1]!.jdTt - sights[0]!.jdTt) / 365.25
+  return Math.max(LEAST_STEPS, Math.min(MOST_STEPS, Math.floor(INTEGRATED_YEARS / Math.max(years, 0.1))))
+}
+
+/** Those of the states that are worth their time. */
+function worthFollowing(sights: readonly Sight[], states: readonly DatedState[], forces: Forces): readonly DatedState[] {
+  if (forces === 'sun') return states
+  return states.slice(0, sights[sights.length - 1]!.jdTt - sights[0]!.jdTt > LONG_ARC_DAYS ? 2 : FOLLOWED)
+}
+
 /**
  * Settles orbits on sights from states.
  * @param sights used, in order of time.
@@ -71,11 +92,12 @@ function startFrom({ state, jdTt }: DatedState, reference: SightReference, optio
  */
 export function settleSights(sights: readonly Sight[], states: readonly DatedState[], reference: SightReference, options: SettleOptions): SettledSights[] {
   const settled: SettledSights[] = []
-  for (const dated of states) {
+  const maxIterations = stepsAllowed(sights, options.forces)
+  for (const dated of worthFollowing(sights, states, options.forces)) {
     const start = startFrom(dated, reference, options)
     if (start === null || !start.values.every((value) => value - value === 0)) continue
     const problem = sightProblem(sights, start.orbit.map, start.orbit.motion)
-    if (isInsideDomain(problem, start.values)) settled.push({ orbit: start.orbit, solution: solveLeastSquares(problem, start.values) })
+    if (isInsideDomain(problem, start.values)) settled.push({ orbit: start.orbit, solution: solveLeastSquares(problem, start.values, { maxIterations }) })
   }
   settled.sort((a, b) => a.solution.chiSquare - b.solution.chiSquare)
   return settled.filter((one, i) => settled.slice(0, i).every((other) => !isSameOrbit(stateOf(other).state, stateOf(one).state)))
@@ -111,9 +133,9 @@ function densestMiddle(sights: readonly Sight[]): number {
  * @param sights used, in order of time.
  * @param forces by which long arcs are followed.
  * @param onProgress part done, 0 … 1.
- * @returns states, best first; none where no orbit was found.
+ * @returns states, best first; none where no orbit was found; `isHopeless` where even a short part of the arc fits no orbit at all.
  */
-export function firstStates(sights: readonly Sight[], forces: Forces, onProgress: (part: number) => void): DatedState[] {
+export function firstStates(sights: readonly Sight[], forces: Forces, onProgress: (part: number) => void): { states: DatedState[]; isHopeless: boolean } {
   const span = sights[sights.length - 1]!.jdTt - sights[0]!.jdTt
   const isWhole = span <= WHOLE_ARC_DAYS
   const middle = isWhole ? 0 : densestMiddle(sights)
@@ -121,12 +143,14 @@ export function firstStates(sights: readonly Sight[], forces: Forces, onProgress
   if (part.length < 3) part = [...sights]
   const reference = middleReference(part)
   const orbit = equatorialOrbit(reference, 'sun')
-  let states = searchFirstOrbits(part, reference, onProgress).map((solution): DatedState => ({ state: stateOfValues(orbit, solution.values), jdTt: reference.jdTt }))
+  const solutions = searchFirstOrbits(part, reference, onProgress)
+  let states = solutions.map((solution): DatedState => ({ state: stateOfValues(orbit, solution.values), jdTt: reference.jdTt }))
+  if (solutions.length > 0 && solutions[0]!.chiSquare > HOPELESS_ABOVE * solutions[0]!.residuals.length) return { states, isHopeless: true }
   for (let days = 2 * WHOLE_ARC_DAYS; part.length < sights.length && states.length > 0; days *= 2) {
     const wider = within(sights, middle, days)
     if (wider.length === part.length) continue
     part = wider
-    states = settleSights(part, states.slice(0, FOLLOWED), middleReference(part), { forces, isParabola: false }).map(stateOf)
+    states = settleSights(part, states.slice(0, days > LONG_ARC_DAYS ? 2 : FOLLOWED), middleReference(part), { forces, isParabola: false }).map(stateOf)
   }
-  return states
+  return { states, isHopeless: false }
 }

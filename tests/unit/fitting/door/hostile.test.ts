@@ -40,7 +40,7 @@ describe('requests that no orbit can be fitted to are refused with a reason and 
     ['too-few-measures', { kind: 'relative', measures: GOOD.map((measure, i) => ({ ...measure, position: { form: 'polar', thetaRad: i / 10 } })) }],
     ['too-few-measures', { kind: 'relative', measures: GOOD.map((measure, i) => ({ ...measure, position: { form: 'polar', rhoArcsec: 1 + i / 10 } })) }],
     ['duplicate-id', { kind: 'relative', measures: [...GOOD, GOOD[0]] }],
-    ['kind-not-available', { kind: 'equatorial', measures: [{ id: 'a', observer: 'x' }] }],
+    ['value-out-of-range', { kind: 'equatorial', measures: [{ id: 'a', observer: 'x' }] }],
     ['kind-not-available', { kind: 'something', measures: GOOD }],
     ['too-few-measures', { kind: 'plane', measures: [plane('a', 1, 1), plane('b', 2, 1)] }],
     ['one-direction', { kind: 'plane', measures: [plane('a', 1, 1), plane('b', 1, 1.1), plane('c', 1 + 2 * Math.PI, 0.9)] }],
