@@ -2,7 +2,9 @@ import { computed, ref } from 'vue'
 import type { FitResult, Residual } from '~~/fitting/types'
 import type { MeasureView } from '#shared/schemas/targets'
 import { formatArcsec, formatDirection, formatEpoch, formatResidual, formatResidualMas } from '#shared/units/angles'
+import { formatUtcTime } from '#shared/units/date-text'
 import { formatNumber } from '#shared/units/number-text'
+import { formatDeclination, formatRightAscension } from '#shared/units/sexagesimal'
 
 interface Column<Measure> {
   key: string
@@ -25,7 +27,14 @@ function numbers<Measure>(heading: { key: string; prefix?: string; symbol: strin
 }
 
 const COLUMNS: Column<MeasureView>[] = [
-  numbers({ key: 'epoch', symbol: '', word: 'epoch, yr' }, measure => measure.epochYr, value => formatEpoch(value)),
+  numbers({ key: 'epoch', symbol: '', word: 'epoch, yr' }, measure => (measure.sky ? null : measure.epochYr), value => formatEpoch(value)),
+  {
+    key: 'time', symbol: '', word: 'UTC', isNumber: true, value: measure => (measure.sky ? measure.timeUtc : null),
+    text: measure => (measure.timeUtc === null ? '—' : formatUtcTime(measure.timeUtc)),
+  },
+  numbers({ key: 'ra', symbol: 'α', word: ', h m s' }, measure => measure.sky?.raDeg ?? null, value => (value === null ? '—' : formatRightAscension(value))),
+  numbers({ key: 'dec', symbol: 'δ', word: ', ° ′ ″' }, measure => measure.sky?.decDeg ?? null, value => (value === null ? '—' : formatDeclination(value))),
+  numbers({ key: 'mag', symbol: '', word: 'mag' }, measure => measure.sky?.mag ?? null, value => (value === null ? '—' : formatNumber(value, 1))),
   numbers({ key: 'phi', symbol: 'φ', word: ', °' }, measure => measure.phiDeg, value => formatDirection(value)),
   numbers({ key: 'theta', symbol: 'θ', word: ', °' }, measure => measure.thetaDeg, value => formatDirection(value)),
   {
@@ -42,8 +51,13 @@ const COLUMNS: Column<MeasureView>[] = [
   numbers({ key: 'oc-north', prefix: 'O−C', symbol: '', word: 'north, mas' }, (_, residual) => difference(residual, 'northArcsec'), value => formatResidualMas(value)),
   numbers({ key: 'oc-r', prefix: 'O−C', symbol: 'r', word: '' }, (_, residual) => (difference(residual, 'diameterArcmin') === null ? difference(residual, 'r') : null), value => formatResidual(value, 5)),
   numbers({ key: 'oc-diameter', prefix: 'O−C', symbol: 'd', word: ', ″' }, (_, residual) => difference(residual, 'diameterArcmin'), value => formatResidual(value === null ? null : value * ARCSEC_AN_ARCMIN)),
+  numbers({ key: 'oc-ra', prefix: 'O−C', symbol: 'α cos δ', word: ', ″' }, (_, residual) => difference(residual, 'raCosDecArcsec'), value => formatResidual(value)),
+  numbers({ key: 'oc-dec', prefix: 'O−C', symbol: 'δ', word: ', ″' }, (_, residual) => difference(residual, 'decArcsec'), value => formatResidual(value)),
+  numbers({ key: 'oc-along', symbol: '', word: 'along, ″' }, (measure, residual) => (measure.sky ? difference(residual, 'alongArcsec') : null), value => formatResidual(value)),
+  numbers({ key: 'oc-across', symbol: '', word: 'across, ″' }, (measure, residual) => (measure.sky ? difference(residual, 'acrossArcsec') : null), value => formatResidual(value)),
   numbers({ key: 'sigmas', symbol: '', word: 'in σ' }, (_, residual) => residual?.normalised ?? null, value => (value === null ? '—' : formatNumber(value, 1))),
   { key: 'observer', symbol: '', word: 'observer', isNumber: false, value: measure => measure.observer, text: measure => measure.observer },
+  { key: 'station', symbol: '', word: 'station', isNumber: false, value: measure => measure.sky?.station ?? null, text: measure => measure.sky?.station ?? '—' },
 ]
 
 /** The columns that these measures fill, and the rows in the order chosen. */

@@ -90,13 +90,19 @@ function signedTicks(series: ResidualSeries) {
   return { tickvals: values, ticktext: values.map(value => formatSigned(value, decimals)) }
 }
 
+/** Directions and dates keep their own ticks; years are found anew when the plot is zoomed. */
+function xTicks(chart: ResidualChart, ticks: readonly { value: number, text: string }[]) {
+  if (chart.axis === 'time') return { nticks: ticks.length + 1 }
+  return { tickvals: ticks.map(tick => tick.value), ticktext: ticks.map(tick => tick.text) }
+}
+
 function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotColours): PlotLayout {
   const [least, greatest] = axisRange(chart)
   const ticks = axisTicksFor(chart, widthPx)
   const rows = chart.series.length
   const height = (1 - (rows - 1) * ROW_GAP) / rows
   const tops = chart.series.map((_, row) => 1 - row * (height + ROW_GAP))
-  const isNowShown = chart.axis === 'time' && nowYr > least && nowYr < greatest
+  const isNowShown = chart.axis !== 'direction' && nowYr > least && nowYr < greatest
   const quiet = { gridcolor: colours.grid, linecolor: colours.rule, tickcolor: colours.rule, zeroline: false, fixedrange: false }
   const yAxes = Object.fromEntries(chart.series.map((series, row) => [row === 0 ? 'yaxis' : `yaxis${row + 1}`, {
     ...quiet, domain: [tops[row]! - height, tops[row]!], range: [-halfHeight(series), halfHeight(series)],
@@ -109,7 +115,7 @@ function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotCol
     hoverlabel: { bgcolor: colours.sheet, bordercolor: colours.ink2, font: { color: colours.ink } },
     modebar: { bgcolor: 'rgba(0,0,0,0)', color: colours.ink2, activecolor: colours.orbit },
     dragmode: matchMedia('(pointer: coarse)').matches ? false : 'zoom',
-    xaxis: { ...quiet, range: [least, greatest], anchor: rows > 1 ? `y${rows}` : 'y', tickvals: chart.axis === 'direction' ? ticks.values : undefined, ticksuffix: chart.axis === 'direction' ? '°' : '', nticks: ticks.values.length + 1, showgrid: false },
+    xaxis: { ...quiet, range: [least, greatest], anchor: rows > 1 ? `y${rows}` : 'y', ...xTicks(chart, ticks), showgrid: false },
     ...yAxes,
     annotations: chart.series.map((series, row) => ({
       xref: 'paper', yref: 'paper', x: 0, y: tops[row], xanchor: 'left', yanchor: 'bottom', yshift: 4, showarrow: false,

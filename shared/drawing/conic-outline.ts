@@ -19,6 +19,8 @@ const RADIANS_PER_DEGREE = Math.PI / 180
 const CURVE_POINTS = 96
 /** How far past the nearest distance an open curve is drawn at least. */
 const OPEN_REACH = 5
+/** How far past its outermost measure an orbit about the Sun is drawn. */
+const SOLAR_OVERHANG = 1.6
 /** How much a line is drawn on past its outermost measures, as a part of its length. */
 const LINE_OVERHANG = 0.15
 
@@ -31,7 +33,7 @@ export function conicOutline(result: FitResult): ConicOutline | null {
   if (result.model === 'line') return straightOutline(result.residuals)
   if (result.model === 'still') return null
   if (result.kind === 'relative') return apparentEllipse(result)
-  return result.kind === 'plane' ? planeConic(result) : null
+  return result.kind === 'plane' ? planeConic(result) : solarConic(result)
 }
 
 /** The apparent ellipse through the Thiele–Innes constants. */
@@ -79,6 +81,22 @@ function planeConic(result: FitResult): ConicOutline | null {
   const limitRad = Math.acos(Math.max(-1, Math.min(1, (p / reach - 1) / e)))
   const points = Array.from({ length: CURVE_POINTS + 1 }, (_, k) => at(limitRad * (2 * k / CURVE_POINTS - 1)))
   return { shape: 'open', points, periapsis: at(0) }
+}
+
+/** Seen from above its own plane with perihelion to the right; a long orbit is cut where it leaves the measures well behind. */
+function solarConic({ conic, residuals }: FitResult): ConicOutline | null {
+  const p = conic?.semiLatusRectum.value
+  const e = conic?.eccentricity.value
+  if (p === undefined || e === undefined || !(p > 0) || !Number.isFinite(e)) return null
+  const outermost = residuals.reduce((largest, { computed }) => Math.max(largest, computed.sunDistanceAu ?? 0), 0)
+  const reach = Math.max(OPEN_REACH * p / (1 + e), SOLAR_OVERHANG * outermost)
+  const at = (trueAnomalyRad: number): Point => {
+    const r = p / (1 + e * Math.cos(trueAnomalyRad))
+    return { x: r * Math.cos(trueAnomalyRad), y: r * Math.sin(trueAnomalyRad) }
+  }
+  if (e < 1 && p / (1 - e) <= reach) return { shape: 'closed', points: aroundOnce(at), periapsis: at(0) }
+  const limitRad = Math.acos(Math.max(-1, Math.min(1, (p / reach - 1) / e)))
+  return { shape: 'open', points: Array.from({ length: CURVE_POINTS + 1 }, (_, k) => at(limitRad * (2 * k / CURVE_POINTS - 1))), periapsis: at(0) }
 }
 
 function straightOutline(residuals: readonly Residual[]): ConicOutline | null {

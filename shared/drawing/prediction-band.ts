@@ -1,6 +1,8 @@
 import type { FitResult, Prediction } from '../../fitting/types'
+import { julianEpochFromJd } from '../../fitting/time'
 import { roundStep } from './axis-ticks'
 import type { PredictedSigma, ResidualSubject } from './residual-series'
+import { trackDates, trackSpan } from './track-dates'
 
 const RADIANS_PER_DEGREE = Math.PI / 180
 const SAMPLES = 80
@@ -15,10 +17,15 @@ const MARK_STEP_TURNS = 1 / 15
  * @param result a finished fit.
  * @param subjects its measures.
  * @param nowYr Julian year now.
- * @returns Julian years from the first measure to past now; for `plane` directions, degrees, once around.
+ * @returns Julian years from the first measure to past now; for `equatorial` Julian dates from the first measure to some weeks past the
+ * last; for `plane` directions, degrees, once around.
  */
 export function sampledEpochsYr(result: FitResult, subjects: readonly ResidualSubject[], nowYr: number): number[] {
   if (result.kind === 'plane') return Array.from({ length: SAMPLES + 1 }, (_, index) => (360 * index) / SAMPLES)
+  if (result.kind === 'equatorial') {
+    const span = trackSpan(result)
+    return span ? trackDates(span) : []
+  }
   const epochs = subjects.flatMap(subject => (subject.epochYr === null ? [] : [subject.epochYr]))
   if (epochs.length === 0) return []
   const first = epochs.reduce((a, b) => Math.min(a, b))
@@ -31,10 +38,13 @@ export function sampledEpochsYr(result: FitResult, subjects: readonly ResidualSu
  * σ of predictions by the names the residuals use: across is ρ σ_θ, along is σ_ρ.
  * @param predictions from the engine.
  * @param diameterScaleArcmin the diameter at r = 1 where diameters were measured: σ_d = scale σ_r / r².
- * @returns one entry a prediction, with the σ that are known.
+ * @returns one entry a prediction, with the σ that are known, at the Julian year or direction.
  */
 export function predictedSigmas(predictions: readonly Prediction[], diameterScaleArcmin: number | null = null): PredictedSigma[] {
-  return predictions.map(({ at, values, sigmas }) => ({ at, sigmas: byResidualName(values, sigmas, diameterScaleArcmin) }))
+  return predictions.map(({ at, values, sigmas }) => ({
+    at: values.raDeg === undefined ? at : julianEpochFromJd(at),
+    sigmas: byResidualName(values, sigmas, diameterScaleArcmin),
+  }))
 }
 
 function byResidualName(values: Record<string, number>, sigmas: Prediction['sigmas'], diameterScaleArcmin: number | null): Record<string, number> {
@@ -42,6 +52,8 @@ function byResidualName(values: Record<string, number>, sigmas: Prediction['sigm
   const named: Record<string, number | null | undefined> = { ...others }
   if (typeof thetaDeg === 'number') named.acrossArcsec = (values.rhoArcsec ?? 0) * thetaDeg * RADIANS_PER_DEGREE
   if (typeof rhoArcsec === 'number') named.alongArcsec = rhoArcsec
+  if (typeof sigmas.raDeg === 'number') named.raCosDecArcsec = sigmas.raDeg * 3600 * Math.cos((values.decDeg ?? 0) * RADIANS_PER_DEGREE)
+  if (typeof sigmas.decDeg === 'number') named.decArcsec = sigmas.decDeg * 3600
   if (diameterScaleArcmin !== null && typeof sigmas.r === 'number' && values.r) named.diameterArcmin = (diameterScaleArcmin * sigmas.r) / values.r ** 2
   return Object.fromEntries(Object.entries(named).filter((entry): entry is [string, number] => typeof entry[1] === 'number'))
 }

@@ -8,7 +8,7 @@ export function csvText(text: string): string {
 
 /** The residual plots' numbers: one row a point. */
 export function residualCsv(chart: ResidualChart): string {
-  const place = chart.axis === 'time' ? 'epoch_yr' : 'phi_deg'
+  const place = chart.axis === 'direction' ? 'phi_deg' : 'epoch_yr'
   const rows = chart.series.flatMap(series =>
     series.points.map(point => [csvText(series.name), csvText(series.unit), point.at, point.value, point.status, csvText(point.observer), point.id].join(',')))
   return [['coordinate', 'unit', place, 'observed_minus_computed', 'status', 'observer', 'measure'].join(','), ...rows].join('\r\n') + '\r\n'

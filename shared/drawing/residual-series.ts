@@ -36,7 +36,8 @@ export interface ResidualSeries {
 }
 
 export interface ResidualChart {
-  axis: 'time' | 'direction'
+  /** date: time as well, told by days and not by years. */
+  axis: 'time' | 'date' | 'direction'
   axisName: string
   series: ResidualSeries[]
 }
@@ -44,12 +45,15 @@ export interface ResidualChart {
 const COORDINATES: Record<string, { name: string; symbols: string }> = {
   acrossArcsec: { name: 'across', symbols: 'ρ Δθ' },
   alongArcsec: { name: 'along', symbols: 'Δρ' },
+  raCosDecArcsec: { name: 'right ascension', symbols: 'Δα cos δ' },
+  decArcsec: { name: 'declination', symbols: 'Δδ' },
   r: { name: 'radius', symbols: 'Δr' },
   diameterArcmin: { name: 'diameter', symbols: 'Δd' },
 }
 /** A diameter gives r as well: it is shown as what was measured where every measure is one, else all are compared in r. */
 function keysOf({ kind, residuals }: FitResult): string[] {
   if (kind === 'relative') return ['acrossArcsec', 'alongArcsec']
+  if (kind === 'equatorial') return ['raCosDecArcsec', 'decArcsec']
   const isDiameter = ({ observedMinusComputed }: Residual) => typeof observedMinusComputed.diameterArcmin === 'number'
   return kind === 'plane' ? [residuals.every(isDiameter) ? 'diameterArcmin' : 'r'] : []
 }
@@ -74,6 +78,7 @@ export function residualChart(result: FitResult, subjects: readonly ResidualSubj
     const band = predicted.flatMap(({ at, sigmas }) => sigmas[key] === undefined ? [] : [{ at, sigma: sigmas[key] * factor }])
     return [{ key, ...(COORDINATES[key] ?? { name: key, symbols: key }), unit, band, points: points.map(point => ({ ...point, value: point.value * factor })) }]
   })
+  if (result.kind === 'equatorial') return { axis: 'date', axisName: 'date', series }
   return { axis: isTimed ? 'time' : 'direction', axisName: isTimed ? 'year' : 'φ, °', series }
 }
 
@@ -87,6 +92,7 @@ function pointOf(residual: Residual, key: string, subject: ResidualSubject | und
 function scaleOf(key: string, points: readonly ResidualPoint[], result: FitResult): { factor: number; unit: string } {
   if (key.endsWith('Arcmin')) return { factor: 60, unit: '″' }
   if (!key.endsWith('Arcsec')) return { factor: 1, unit: result.conic?.semiLatusRectum.unit ?? 'unit' }
+  if (result.kind === 'equatorial') return { factor: 1, unit: '″' }
   const isSmall = points.every(point => Math.abs(point.value) < 1 || point.status !== 'used')
   return isSmall ? { factor: 1000, unit: 'mas' } : { factor: 1, unit: '″' }
 }

@@ -1,5 +1,9 @@
+import { jdFromJulianEpoch, julianEpochFromJd } from '../../fitting/time'
+import { formatJulianDay } from '../units/date-text'
+import { formatNumber } from '../units/number-text'
 import { axisTicks, roundStep, ticksEvery, type AxisTicks } from './axis-ticks'
 import { halfHeight, type ResidualChart, type ResidualSeries } from './residual-series'
+import { markedDays } from './track-dates'
 
 const ROW_PX = 104
 const ROW_GAP_PX = 34
@@ -26,7 +30,7 @@ export interface ResidualSheet {
   heightPx: number
   leftPx: number
   rightPx: number
-  axis: { px: number; value: number; decimals: number }[]
+  axis: { px: number; value: number; text: string }[]
   nowPx: number | null
   rows: ResidualRow[]
 }
@@ -40,11 +44,16 @@ export function axisRange(chart: ResidualChart): [number, number] {
   return [least - room, greatest + room]
 }
 
-/** Ticks of the shared axis for a width: every 30° or 90° of φ, or round years. */
-export function axisTicksFor(chart: ResidualChart, widthPx: number): AxisTicks {
+/** Ticks of the shared axis for a width, with their words: every 30° or 90° of φ, round years, or round days. */
+export function axisTicksFor(chart: ResidualChart, widthPx: number): { value: number; text: string }[] {
   const [least, greatest] = axisRange(chart)
-  if (chart.axis === 'direction') return ticksEvery(least, greatest, widthPx > 600 ? 30 : 90)
-  return axisTicks(least, greatest, widthPx > 600 ? 9 : 5)
+  const isWide = widthPx > 600
+  if (chart.axis === 'date') {
+    const days = markedDays(jdFromJulianEpoch(least), jdFromJulianEpoch(greatest), isWide ? 12 : 5)
+    return days.map((jd, index) => ({ value: julianEpochFromJd(jd), text: formatJulianDay(jd, isWide && index === 0) }))
+  }
+  const ticks = chart.axis === 'direction' ? ticksEvery(least, greatest, isWide ? 30 : 90) : axisTicks(least, greatest, isWide ? 9 : 5)
+  return ticks.values.map(value => ({ value, text: `${formatNumber(value, ticks.decimals)}${chart.axis === 'direction' ? '°' : ''}` }))
 }
 
 /**
@@ -58,14 +67,14 @@ export function residualSheet(chart: ResidualChart, widthPx: number, nowAt: numb
   const [least, greatest] = axisRange(chart)
   const x = (at: number) => tenth(LEFT_PX + ((at - least) / (greatest - least)) * (widthPx - LEFT_PX - RIGHT_PX))
   const ticks = axisTicksFor(chart, widthPx)
-  const isNowShown = chart.axis === 'time' && nowAt > least && nowAt < greatest
+  const isNowShown = chart.axis !== 'direction' && nowAt > least && nowAt < greatest
   const rowsPx = chart.series.length * ROW_PX + (chart.series.length - 1) * ROW_GAP_PX
   return {
     widthPx,
     heightPx: TOP_PX + rowsPx + AXIS_PX,
     leftPx: LEFT_PX,
     rightPx: widthPx - RIGHT_PX,
-    axis: ticks.values.map(value => ({ value, decimals: ticks.decimals, px: x(value) })),
+    axis: ticks.map(tick => ({ ...tick, px: x(tick.value) })),
     nowPx: isNowShown ? x(nowAt) : null,
     rows: chart.series.map((series, index) => rowOf(series, TOP_PX + index * (ROW_PX + ROW_GAP_PX), x)),
   }

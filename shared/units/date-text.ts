@@ -1,3 +1,6 @@
+import { calendarFromJd } from '../../fitting/time'
+import { formatNumber } from './number-text'
+
 /** Dates and spans of time as pages and mail write them: day, short month, year; always UTC. */
 
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
@@ -56,4 +59,37 @@ export function formatWaiting(fromIso: string, toIso: string): string {
  */
 export function formatCount(count: number, singular: string, plural = `${singular}s`): string {
   return `${count} ${count === 1 ? singular : plural}`
+}
+
+/**
+ * Writes the day of a Julian date, such as "14 Mar".
+ * @param jd Julian date, d, of whichever scale
+ * @param withYear whether the year follows
+ * @returns day, short month and, where asked for, the year
+ */
+export function formatJulianDay(jd: number, withYear = false): string {
+  const { year, month, day } = calendarFromJd(jd, 'gregorian')
+  return `${Math.floor(day)} ${MONTHS[month - 1]}${withYear ? ` ${year}` : ''}`
+}
+
+/**
+ * Writes a Julian date as the trade writes a time of perihelion: year, month, day with decimals.
+ * @param jd Julian date, d
+ * @param decimals of the day, 0 to 9
+ * @returns such as "2026 Apr 12.314"; a day that rounds up goes over to the next date
+ */
+export function formatJulianDate(jd: number, decimals: number): string {
+  const scale = 10 ** Math.min(9, Math.max(0, decimals))
+  const { year, month, day } = calendarFromJd(Math.round((jd + 0.5) * scale) / scale - 0.5, 'gregorian')
+  return `${year} ${MONTHS[month - 1]} ${formatNumber(day, Math.max(0, decimals))}`
+}
+
+/**
+ * Writes an instant to the second for tables, such as "2026-03-14 20:51:07".
+ * @param isoInstant ISO 8601 with its offset
+ * @returns day and time of day, UTC
+ * @throws RangeError where the text is no instant
+ */
+export function formatUtcTime(isoInstant: string): string {
+  return new Date(Math.round(readInstant(isoInstant).getTime() / 1000) * 1000).toISOString().slice(0, 19).replace('T', ' ')
 }

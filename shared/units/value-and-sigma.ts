@@ -1,4 +1,5 @@
 import type { Element } from '../../fitting/types'
+import { formatJulianDate } from './date-text'
 import { decimalsOf, formatDigits, formatNumber } from './number-text'
 import { unitSymbol } from './unit-symbol'
 
@@ -59,4 +60,16 @@ export function withUnit(text: string, unit: string): string {
   const symbol = unitSymbol(unit)
   if (symbol === '') return text
   return /^[°′″]/.test(symbol) ? `${text}${symbol}` : `${text} ${symbol}`
+}
+
+/**
+ * Writes an element for a table: a Julian date becomes the date that observers read.
+ * @param element value and error to publish, with their unit
+ * @returns value and σ with the same decimals, and the sign of the unit: "2026 Apr 12.314", "0.021", "d"
+ */
+export function elementCells(element: Element): ValueAndSigma & { unit: string } {
+  const { value, sigma } = formatValueAndSigma(element.value, element.sigma)
+  if (element.unit !== 'JD TT') return { value, sigma, unit: unitSymbol(element.unit) }
+  const decimals = Math.min(6, Math.max(0, decimalsForSigma(element.sigma) ?? 2))
+  return { value: formatJulianDate(element.value, decimals), sigma, unit: 'd' }
 }

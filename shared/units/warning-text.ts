@@ -1,6 +1,7 @@
 import type { Alternative, FitResult } from '../../fitting/types'
 import { elementFamily, labelledElements } from './element-labels'
 import { formatEpoch } from './angles'
+import { formatUtcTime } from './date-text'
 import { formatNumber } from './number-text'
 import { formatElement } from './value-and-sigma'
 
@@ -15,6 +16,8 @@ interface NamedMeasure {
   observer: string
   epochYr: number | null
   phiDeg: number | null
+  timeUtc?: string | null
+  sky?: object
 }
 
 const ID = /([a-z2-7]{26})/
@@ -29,8 +32,9 @@ export function linkMeasures(sentence: string, measures: readonly NamedMeasure[]
   })
 }
 
-/** "2011.319, Mirelle Tasque", or by φ where no time was given. */
-export function nameOfMeasure({ observer, epochYr, phiDeg }: NamedMeasure): string {
+/** "2011.319, Mirelle Tasque"; by the second for a body that moves, by φ where no time was given. */
+export function nameOfMeasure({ observer, epochYr, phiDeg, timeUtc, sky }: NamedMeasure): string {
+  if (sky && timeUtc) return `${formatUtcTime(timeUtc)}, ${observer}`
   const place = epochYr !== null ? formatEpoch(epochYr) : phiDeg !== null ? `φ ${formatNumber(phiDeg, 1)}°` : 'undated'
   return `${place}, ${observer}`
 }
@@ -38,7 +42,7 @@ export function nameOfMeasure({ observer, epochYr, phiDeg }: NamedMeasure): stri
 /** "Another orbit fits with Δχ² 2.1: P 188 ± 21 yr, e 0.48, a 1.2″". */
 export function alternativeSentence({ deltaChiSquare, elements }: Alternative, result: FitResult): string {
   const named = labelledElements(elements, elementFamily(result))
-    .filter(({ label }) => ['period', 'eccentricity', 'semiMajorAxis', 'semiLatusRectum'].includes(label.name))
+    .filter(({ label }) => ['period', 'perihelionDistance', 'eccentricity', 'semiMajorAxis', 'semiLatusRectum'].includes(label.name))
     .slice(0, NAMED_ELEMENTS)
     .map(({ label, element }) => `${label.symbol} ${formatElement(element)}`)
   return `Another orbit fits with Δχ² ${formatNumber(deltaChiSquare, 1)}: ${named.join(', ')}.`

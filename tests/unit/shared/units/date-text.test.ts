@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { formatCount, formatDate, formatDateTime, formatWaiting } from '../../../../shared/units/date-text'
+import { formatCount, formatDate, formatDateTime, formatJulianDate, formatJulianDay, formatUtcTime, formatWaiting } from '../../../../shared/units/date-text'
 
 describe('dates in words', () => {
   it('a day is written in UTC whatever offset the instant came with', () => {
@@ -9,6 +9,18 @@ describe('dates in words', () => {
 
   it('an instant is written to the minute and names UTC', () => {
     expect(formatDateTime('2026-12-01T05:09:59.999Z')).toBe('1 Dec 2026, 05:09 UTC')
+  })
+
+  it('a Julian date is written as day and month, or with decimals of the day that go over to the next month', () => {
+    expect(formatJulianDay(2461114.5)).toBe('15 Mar')
+    expect(formatJulianDay(2461114.5, true)).toBe('15 Mar 2026')
+    expect(formatJulianDate(2461142.814, 3)).toBe('2026 Apr 12.314')
+    expect(formatJulianDate(2461130.4999, 2)).toBe('2026 Mar 31.00')
+    expect(formatJulianDate(2461131.4999, 2)).toBe('2026 Apr 1.00')
+  })
+
+  it('an instant in a table is written to the second', () => {
+    expect(formatUtcTime('2026-03-14T20:51:07.600Z')).toBe('2026-03-14 20:51:08')
   })
 
   it('text that is no instant is refused rather than printed as NaN', () => {
