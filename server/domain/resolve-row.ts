@@ -4,6 +4,7 @@ import { nameKey } from '../../shared/intake/name-key'
 import type { ParsedRow } from '../../shared/intake/parsed-row'
 import { ROW_SENTENCES } from '../../shared/intake/sentences'
 import type { CellProblem } from '../../shared/schemas/batches'
+import { KIND_TEXT } from '../../shared/units/kind-text'
 
 /** A row of a draft as it was read, with what reading it found. */
 export interface DraftRow {
@@ -49,10 +50,10 @@ export function targetOf(row: DraftRow, around: Surroundings): { target: KnownTa
     return complain('The row names no target, and none was chosen for the file.', 'Choose the target of the whole file, or write its name in the column target.')
   }
   if (!target) {
-    return complain(`No target here is called ${written}.`, 'Check the spelling, or ask a coordinator to add this target; then look at the row again.')
+    return complain(`No target here is called ${written}.`, 'Check the spelling, or ask a coordinator to add this target and then choose it under Target: all rows are looked at again.')
   }
   if (target.kind !== around.kind) {
-    return complain(`${target.name} takes measures of the kind ${target.kind}, and this file holds the kind ${around.kind}.`, 'Name a target of the same kind, or upload the file as the other kind.')
+    return complain(`${target.name} takes measures of the kind "${KIND_TEXT[target.kind]}", and this file was read as "${KIND_TEXT[around.kind]}".`, 'Name a target of the same kind, or upload the file as the other kind.')
   }
   return { target }
 }

@@ -54,7 +54,7 @@ function decodeStrictly(bytes: Uint8Array, label: string): string | null {
 
 function accept(text: string, encoding: string, note: CellProblem | null = null): DecodedText {
   const control = firstControlCode(text)
-  if (control !== null) return refuse(fileProblem(FILE_SENTENCES.binary(`a file with control character ${control}`)))
+  if (control !== null) return refuse(fileProblem(FILE_SENTENCES.binary(`a binary file (it holds the control character ${control})`)))
   if (text.trim() === '') return refuse(fileProblem(FILE_SENTENCES.empty()))
   return { ok: true, text, encoding, note }
 }

@@ -1,8 +1,9 @@
 import { KINDS, type Kind } from '../../fitting/types'
 import type { CellProblem } from '../schemas/batches'
+import { KIND_TEXT } from '../units/kind-text'
 import { canonicalHeading, COLUMNS, EPOCH_COLUMNS, type MeasureColumn } from './columns'
 import { nearestName } from './nearest-name'
-import { asNote, fileProblem } from './problems'
+import { asNote, fileProblem, type Complaint } from './problems'
 import { holdsNumbers, type Table } from './read-table'
 import { FILE_SENTENCES } from './sentences'
 
@@ -18,8 +19,13 @@ export interface MatchedColumns {
 /** Wider tables are something else than measures. */
 const MOST_COLUMNS = 500
 
+interface Needed {
+  what: string
+  anyOf: readonly MeasureColumn[]
+}
+
 /** What every file of a kind must have a column of, in words. */
-const NEEDED: Record<Kind, { what: string; anyOf: readonly MeasureColumn[] }[]> = {
+const NEEDED: Record<Kind, Needed[]> = {
   relative: [
     { what: 'when it was measured (epoch, jd, mjd or date)', anyOf: EPOCH_COLUMNS },
     { what: 'what was measured (theta_deg and rho_arcsec, east_arcsec and north_arcsec, or rho_limit_arcsec)', anyOf: ['theta_deg', 'rho_arcsec', 'east_arcsec', 'north_arcsec', 'rho_limit_arcsec'] },
@@ -49,13 +55,31 @@ export function matchColumns(table: Table, kind: Kind): MatchedColumns {
   const used = found.flatMap(({ name, index }) => (isName(name) ? [{ name, index }] : []))
   const unused = found.filter(({ heading, name }) => heading !== '' && !isName(name))
   const twice = [...new Set(used.filter(({ name, index }) => used.some(other => other.name === name && other.index < index)).map(({ name }) => name))]
-  const missing = NEEDED[kind].filter(({ anyOf }) => !used.some(({ name }) => anyOf.includes(name)))
+  const missing = missingFor(kind, found.map(({ name }) => name))
   const notes = unused.map(({ heading, name }) => unusedNote({ heading, name, kind, rowNumber: table.headerRow, free: names.filter(column => !used.some(other => other.name === column)) }))
   const errors = [
     ...twice.map(name => fileProblem(FILE_SENTENCES.duplicateHeading(name), { ...inHeader, column: name })),
-    ...missing.map(({ what }) => fileProblem(FILE_SENTENCES.columnMissing(what, list(table.headings)), inHeader)),
+    ...missingErrors({ missing, kind, names: found.map(({ name }) => name), headings: table.headings }).map(sentence => fileProblem(sentence, inHeader)),
   ]
   return { used, columns: used.map(({ name }) => name), unusedColumns: unused.map(({ heading }) => heading), errors, notes }
+}
+
+function missingFor(kind: Kind, names: readonly string[]): Needed[] {
+  return NEEDED[kind].filter(({ anyOf }) => !anyOf.some(name => names.includes(name)))
+}
+
+/** A file that has all that another kind needs was sent as the wrong kind; else every missing column is named. */
+function missingErrors({ missing, kind, names, headings }: { missing: Needed[], kind: Kind, names: string[], headings: readonly string[] }): Complaint[] {
+  const other = missing.length === 0 ? undefined : KINDS.find(candidate => candidate !== kind && missingFor(candidate, names).length === 0)
+  if (other) return [FILE_SENTENCES.fileOfOtherKind(KIND_TEXT[other], KIND_TEXT[kind])]
+  return missing.map(({ what }) => FILE_SENTENCES.columnMissing(what, list(headings)))
+}
+
+/** The same thing under the name that it has in another kind. */
+const TWINS: Partial<Record<Kind, Record<string, MeasureColumn>>> = {
+  relative: { time_utc: 'date' },
+  plane: { date: 'time_utc' },
+  equatorial: { date: 'time_utc' },
 }
 
 interface UnusedColumn {
@@ -67,10 +91,15 @@ interface UnusedColumn {
   free: MeasureColumn[]
 }
 
-function unusedNote({ heading, name, kind, rowNumber, free }: UnusedColumn): CellProblem {
+function unusedNote({ heading, rowNumber, ...column }: UnusedColumn): CellProblem {
+  return asNote(fileProblem(unusedSentence(column), { rowNumber, column: heading.slice(0, 60), value: heading.slice(0, 80) }))
+}
+
+function unusedSentence({ name, kind, free }: Pick<UnusedColumn, 'name' | 'kind' | 'free'>): Complaint {
+  const twin = TWINS[kind]?.[name]
+  if (twin && free.includes(twin)) return FILE_SENTENCES.columnNotUsed(twin)
   const other = KINDS.find(candidate => candidate !== kind && COLUMNS[candidate].some(column => column.name === name))
-  const sentence = other ? FILE_SENTENCES.columnOfOtherKind(other) : FILE_SENTENCES.columnNotUsed(nearestName(name, free))
-  return asNote(fileProblem(sentence, { rowNumber, column: heading.slice(0, 60), value: heading.slice(0, 80) }))
+  return other ? FILE_SENTENCES.columnOfOtherKind(KIND_TEXT[other]) : FILE_SENTENCES.columnNotUsed(nearestName(name, free))
 }
 
 const SHOWN_HEADINGS = 12

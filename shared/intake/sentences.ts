@@ -18,7 +18,8 @@ export const FILE_SENTENCES = {
   tooManyRows: (rows: number, cap: number) => complain(`The file has ${rows} rows of measures; ${cap} are read at once.`, 'Split it into several files.'),
   inManyRows: (note: Complaint, rows: number) => complain(`In ${rows} rows: ${note.reason}`, note.remedy),
   columnNotUsed: (nearest: string | null) => complain('This column is not used.', nearest ? `Did you mean ${nearest}? Rename the column if so.` : 'Nothing needs doing if that is right.'),
-  columnOfOtherKind: (kind: string) => complain(`This column is not used: it belongs to measures of the kind ${kind}.`, 'Choose the other kind if that is what the file holds.'),
+  columnOfOtherKind: (kind: string) => complain(`This column is not used: it belongs to measures of another kind, "${kind}".`, 'Choose that kind if it is what the file holds.'),
+  fileOfOtherKind: (other: string, kind: string) => complain(`The columns are those of the kind "${other}", and the file was read as "${kind}".`, `Send the file again as "${other}".`),
 } as const
 
 export const ROW_SENTENCES = {

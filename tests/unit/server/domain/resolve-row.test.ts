@@ -30,7 +30,7 @@ describe('a row of a draft', () => {
   it.each([
     ['an unknown name', { target: 'Linden 13' }, /No target here is called Linden 13/, /Check the spelling/],
     ['no name and none chosen', {}, /names no target/, /Choose the target/],
-    ['a target of another kind', { target: 'Sun 2026' }, /takes measures of the kind plane/, /upload the file as the other kind/],
+    ['a target of another kind', { target: 'Sun 2026' }, /takes measures of the kind "in the plane of the orbit"/, /upload the file as the other kind/],
   ])('is bad with a remedy for %s', (_what, cells, reason, remedy) => {
     const [resolution] = resolve([row(2, cells)])
     expect(resolution).toMatchObject({ state: 'bad', problems: [{ rowNumber: 2, column: 'target', severity: 'error' }] })

@@ -125,3 +125,22 @@ describe('reading positions in the plane of an orbit', () => {
     expect(rows[3]!.parsed).toMatchObject({ phiDeg: 0, timeUtc: '2026-11-28T21:30:00.000Z' })
   })
 })
+
+describe('a file sent as the wrong kind', () => {
+  it('is told so in one sentence, with the kind it belongs to, where its columns are all that the other kind needs', () => {
+    const { fileProblems } = relative('target,date,phi_deg,diameter_arcmin\nSun 2026,2026-01-04,104,32.5\n')
+    expect(fileProblems.filter(({ severity }) => severity === 'error')).toEqual([expect.objectContaining({
+      reason: expect.stringContaining('kind "in the plane of the orbit"') as string, remedy: 'Send the file again as "in the plane of the orbit".',
+    })])
+  })
+
+  it('still names every missing column where it fits no kind at all', () => {
+    const { fileProblems } = relative('foo,bar\n1,2\n')
+    expect(fileProblems.map(({ reason }) => reason)).toEqual([expect.stringMatching(/when it was measured/), expect.stringMatching(/what was measured/), expect.any(String), expect.any(String)])
+  })
+
+  it('is asked whether its date is the time of the other kind, rather than being sent elsewhere', () => {
+    const { fileProblems } = readMeasures('date,phi_deg,diameter_arcmin\n2026-01-04,104,32.5\n', { kind: 'plane' })
+    expect(fileProblems).toEqual([expect.objectContaining({ column: 'date', severity: 'note', remedy: 'Did you mean time_utc? Rename the column if so.' })])
+  })
+})
