@@ -5,11 +5,11 @@
  */
 import { cross, dot, lengthOf, type Vector } from '../conic/state'
 import { withinTurn } from '../conic/thiele-innes'
-import { LIGHT_AU_PER_D, earthHeliocentric, sunBarycentricVelocity } from '../earth'
+import { earthHeliocentric, sunBarycentricVelocity } from '../earth'
 import { asin, atan2, RAD } from '../elementary'
 import { orbitOfState, stateOfValues } from '../models/equatorial-orbit'
 import { tangentsOf } from '../models/sight-frame'
-import { emptyLineOfSight, lineOfSightInto, roughLightTime, type LineOfSight } from '../models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto, lineRate, roughLightTime, type LineOfSight } from '../models/sight-rows'
 import { ARCSEC_RAD } from '../models/sighting'
 import type { FitState, Prediction } from '../types'
 import { quadraticForm } from '../uncertainty/error-scale'
@@ -67,15 +67,15 @@ function errorsOf(covariance: number[][] | null, gradients: Gradients, level: nu
 interface Seen {
   found: LineOfSight
   earth: Float64Array
+  sunVelocity: Float64Array
 }
 
-function valuesOf({ found, earth }: Seen): Record<string, number> {
+function valuesOf({ found, earth, sunVelocity }: Seen): Record<string, number> {
   const [line, body, observer] = [vectorOf(found.line), vectorOf(found.state), vectorOf(earth)]
   const u = line.map((part) => part / found.distance) as unknown as Vector
   const { east, north } = tangentsOf(u)
-  const gain: Vector = [0, 1, 2].map((k) => found.state[k + 3]! - earth[k + 3]!) as unknown as Vector
-  const slowed = 1 - dot(gain, u) / LIGHT_AU_PER_D
-  const rate = (axis: Vector) => slowed * dot(gain, axis) / found.distance / ARCSEC_RAD / MINUTES_PER_DAY
+  const change = lineRate(sunVelocity, found, earth.subarray(3))
+  const rate = (axis: Vector) => dot(change, axis) / found.distance / ARCSEC_RAD / MINUTES_PER_DAY
   const [raRate, decRate] = [rate(east), rate(north)]
   return {
     raDeg: withinTurn(atan2(u[1], u[0])) * RAD,
@@ -114,7 +114,7 @@ export function predictEquatorial(state: FitState, at: readonly number[]): Predi
     const sight = { jdTt, observer: earth.subarray(0, 3), sunVelocity }
     const none: Prediction = { at: jdTt, values: {}, sigmas: {}, correlation: null }
     if (!isBegun || !lineOfSightInto(sight, orbit.motion, roughLightTime(sight, start), found, true)) return none
-    const values = valuesOf({ found, earth })
+    const values = valuesOf({ found, earth, sunVelocity })
     const level = Math.sqrt(found.line[0]! * found.line[0]! + found.line[1]! * found.line[1]!) / found.distance
     const { ellipse, sigmas, correlation } = errorsOf(state.covariance, gradientsOf(found, byParameter, p), level)
     if (ellipse !== null) {

@@ -88,21 +88,22 @@ function stepDays(y: Float64Array): number {
 /** Steps to one side of the epoch, grown as far as asked. */
 interface Side {
   sign: 1 | -1
+  /** Days after the epoch. */
   times: number[]
   values: Float64Array[]
   rates: Float64Array[]
 }
 
-function grow(side: Side, jdTt: number, width: number): boolean {
-  while (side.sign * (jdTt - side.times[side.times.length - 1]!) > 0) {
+function grow(side: Side, epochJdTt: number, days: number, width: number): boolean {
+  while (side.times.length === 1 || side.sign * (days - side.times[side.times.length - 1]!) > 0) {
     const at = side.times.length - 1
     if (at >= MOST_STEPS) return false
     const y = side.values[at]!
     const h = side.sign * stepDays(y)
     const next = new Float64Array(width)
-    stepInto(y, side.rates[at]!, side.times[at]!, h, width, next)
+    stepInto(y, side.rates[at]!, epochJdTt + side.times[at]!, h, width, next)
     const rate = new Float64Array(width)
-    rateInto(next, side.times[at]! + h, rate, width)
+    rateInto(next, epochJdTt + side.times[at]! + h, rate, width)
     if (!(next[0]! - next[0]! === 0 && rate[3]! - rate[3]! === 0)) return false
     side.times.push(side.times[at]! + h)
     side.values.push(next)
@@ -112,11 +113,11 @@ function grow(side: Side, jdTt: number, width: number): boolean {
 }
 
 /** Index of the step that holds a time: the last node not beyond it. */
-function stepAt({ times, sign }: Side, jdTt: number): number {
+function stepAt({ times, sign }: Side, days: number): number {
   let [low, high] = [0, times.length - 1]
   while (high - low > 1) {
     const middle = (low + high) >> 1
-    if (sign * (jdTt - times[middle]!) >= 0) low = middle
+    if (sign * (days - times[middle]!) >= 0) low = middle
     else high = middle
   }
   return low
@@ -155,6 +156,7 @@ export function planetMotion(epochJdTt: number): Motion {
   let sides: Side[] = []
   let width = STATE
   return {
+    epochJdTt,
     begin(state, withPartials) {
       width = withPartials ? WHOLE : STATE
       const start = new Float64Array(width)
@@ -162,16 +164,15 @@ export function planetMotion(epochJdTt: number): Motion {
       if (withPartials) for (let k = 0; k < 6; k++) start[6 + 7 * k] = 1
       const rate = new Float64Array(width)
       rateInto(start, epochJdTt, rate, width)
-      sides = ([1, -1] as const).map((sign) => ({ sign, times: [epochJdTt], values: [start], rates: [rate] }))
+      sides = ([1, -1] as const).map((sign) => ({ sign, times: [0], values: [start], rates: [rate] }))
       return rate[3]! - rate[3]! === 0
     },
-    at(jdTt, out, partials) {
-      const side = sides[jdTt >= epochJdTt ? 0 : 1]!
-      if (!grow(side, jdTt, width)) return false
-      if (side.times.length === 1 && !grow(side, jdTt + side.sign * 1e-6, width)) return false
-      const i = stepAt(side, jdTt)
+    at(days, out, partials) {
+      const side = sides[days >= 0 ? 0 : 1]!
+      if (!grow(side, epochJdTt, days, width)) return false
+      const i = stepAt(side, days)
       const h = side.times[i + 1]! - side.times[i]!
-      const t = (jdTt - side.times[i]!) / h
+      const t = (days - side.times[i]!) / h
       stateBetween(side, i, t, h, out)
       if (partials && width === WHOLE) partialsBetween(side, i, t, h, partials)
       return out[0]! - out[0]! === 0

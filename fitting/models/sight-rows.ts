@@ -31,10 +31,12 @@ export interface Sight {
 
 /** A way of moving from the state at the epoch to another time. */
 export interface Motion {
+  /** JD of TT of the epoch. */
+  epochJdTt: number
   /** Takes the state at the epoch; false where it cannot be moved. */
   begin(state: Float64Array, withPartials: boolean): boolean
-  /** State at a time and, where asked, its 36 derivatives by the state at the epoch. */
-  at(jdTt: number, out: Float64Array, partials?: Float64Array): boolean
+  /** State so many days after the epoch (a Julian date would round them) and, where asked, its 36 derivatives by the state at the epoch. */
+  at(days: number, out: Float64Array, partials?: Float64Array): boolean
 }
 
 /**
@@ -46,11 +48,12 @@ export interface Motion {
 export function sunMotion(epochJdTt: number): Motion {
   const start = new Float64Array(6)
   return {
+    epochJdTt,
     begin(state) {
       start.set(state)
       return true
     },
-    at: (jdTt, out, partials) => moveInto(start, MU, jdTt - epochJdTt, out, partials),
+    at: (days, out, partials) => moveInto(start, MU, days, out, partials),
   }
 }
 
@@ -108,7 +111,7 @@ function restOfLightTime(sight: Pick<Sight, 'observer' | 'sunVelocity'>, guess: 
  * Source: Explanatory Supplement to the Astronomical Almanac (1992), 3.31.
  */
 export function lineOfSightInto(sight: Pick<Sight, 'jdTt' | 'observer' | 'sunVelocity'>, motion: Motion, guessDays: number, out: LineOfSight, withPartials: boolean): boolean {
-  if (!motion.at(sight.jdTt - guessDays, moved, withPartials ? moves : undefined)) return false
+  if (!motion.at(sight.jdTt - motion.epochJdTt - guessDays, moved, withPartials ? moves : undefined)) return false
   const r = Math.sqrt(moved[0]! * moved[0]! + moved[1]! * moved[1]! + moved[2]! * moved[2]!)
   const pull = MU / (r * r * r)
   const rest = restOfLightTime(sight, guessDays, pull)
@@ -125,6 +128,26 @@ export function lineOfSightInto(sight: Pick<Sight, 'jdTt' | 'observer' | 'sunVel
   if (!(out.distance > 0 && out.distance < Infinity)) return false
   if (withPartials) partialsOfLine(sight, rest, out)
   return true
+}
+
+/**
+ * Rate of the line of sight, with the light-time's own change.
+ * @param sunVelocity of the Sun about the barycentre, au/d.
+ * @param found the line of sight.
+ * @param earthVelocity of the observer, taken to go with the Earth's centre, au/d.
+ * @returns ḋ = v − Ė − τ̇(v + V), au/d, with cτ̇ = d̂·ḋ.
+ * Source: the derivative of the equation in the head of this file.
+ */
+export function lineRate(sunVelocity: ArrayLike<number>, { line, distance, state }: LineOfSight, earthVelocity: ArrayLike<number>): [number, number, number] {
+  let closing = LIGHT_AU_PER_D
+  let opening = 0
+  for (let k = 0; k < 3; k++) {
+    closing += line[k]! / distance * (state[k + 3]! + sunVelocity[k]!)
+    opening += line[k]! / distance * (state[k + 3]! - earthVelocity[k]!)
+  }
+  const slowing = opening / closing
+  const rate = (k: number) => state[k + 3]! - earthVelocity[k]! - slowing * (state[k + 3]! + sunVelocity[k]!)
+  return [rate(0), rate(1), rate(2)]
 }
 
 /** dd = Φ dx − (v + V) dτ with c dτ = d̂·dd. */

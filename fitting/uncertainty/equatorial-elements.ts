@@ -90,7 +90,7 @@ export function equatorialElements(orbit: EquatorialOrbit, values: ArrayLike<num
   const elementsAt = (parameters: ArrayLike<number>): PerihelionElements | null => {
     if (!map.stateInto(parameters, state, null)) return null
     if (epochJdTt === reference.jdTt) moved.set(state)
-    else if (!motion.begin(state, false) || !motion.at(epochJdTt, moved)) return null
+    else if (!motion.begin(state, false) || !motion.at(epochJdTt - motion.epochJdTt, moved)) return null
     const elements = perihelionFromState(moved, epochJdTt)
     return isParabola ? { ...elements, eccentricity: 1 } : elements
   }

@@ -7,9 +7,9 @@
 import { cross, dot, eccentricityVector, lengthOf, type Vector } from '../conic/state'
 import { asin, atan2, RAD } from '../elementary'
 import { withinTurn } from '../conic/thiele-innes'
-import { earthHeliocentric, LIGHT_AU_PER_D, SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth'
+import { earthHeliocentric, SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth'
 import { stateOfValues, type EquatorialOrbit } from '../models/equatorial-orbit'
-import { emptyLineOfSight, lineOfSightInto, roughLightTime, sightProblem, type LineOfSight } from '../models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto, lineRate, roughLightTime, sightProblem, type LineOfSight } from '../models/sight-rows'
 import { ARCSEC_RAD, type Sighting, type SkyMotion } from '../models/sighting'
 import type { Residual } from '../types'
 import { influenceOf } from './influence'
@@ -37,11 +37,8 @@ const vectorOf = (a: ArrayLike<number>, from = 0): Vector => [a[from]!, a[from +
  * @returns rad/d, east and north.
  */
 export function skyMotionOf(sighting: Sighting, found: LineOfSight, earthVelocity: ArrayLike<number>): SkyMotion {
-  const line = vectorOf(found.line)
-  const gain: Vector = [0, 1, 2].map((k) => found.state[k + 3]! - earthVelocity[k]!) as unknown as Vector
-  const along = dot(gain, line) / found.distance
-  const slowed = 1 - along / LIGHT_AU_PER_D
-  return [3, 6].map((from) => slowed * dot(gain, vectorOf(sighting.axes, from)) / found.distance) as unknown as SkyMotion
+  const rate = lineRate(sighting.sunVelocity, found, earthVelocity)
+  return [dot(rate, vectorOf(sighting.axes, 3)) / found.distance, dot(rate, vectorOf(sighting.axes, 6)) / found.distance]
 }
 
 /** O−C east and north, rad: the observed direction about the computed one. */
