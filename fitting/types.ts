@@ -55,7 +55,7 @@ export interface RelativeMeasure extends MeasureBase {
   /** Julian year, TT; 1600 to 2500. */
   epochYr: number
   position: PolarPosition | RectangularPosition | LimitPosition
-  /** Number of nights in the mean, ≥ 1. */
+  /** Number of nights in the mean, ≥ 1; shapes σ only where it is not stated. */
   nights?: number
 }
 

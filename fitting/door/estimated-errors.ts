@@ -23,11 +23,11 @@ export function withEstimatedErrors(measures: SkyMeasures, { solution }: Settled
 /**
  * The estimated error of measures on the sky, for the statistics.
  * @param measures with their last errors.
- * @returns one σ for all, arcsec; nothing where errors were stated.
+ * @returns one σ for all, that of a single night, arcsec; nothing where errors were stated.
  */
 export function estimatedSigma(measures: SkyMeasures): Pick<FitStatistics, 'estimatedSigma'> {
   if (measures.basis !== 'scaled') return {}
-  return { estimatedSigma: { position: { value: measures.used[0]!.sigmaAlong, unit: 'arcsec' } } }
+  return { estimatedSigma: { position: { value: measures.used[0]!.sigmaAlong / measures.used[0]!.nightsFactor, unit: 'arcsec' } } }
 }
 
 /**

@@ -1,6 +1,7 @@
 /** Fits without an orbit: uniform straight motion, or a companion that does not move. */
 import { atan2, hypot, RAD } from '../elementary'
 import { linePath, stillPath } from '../models/relative-line'
+import { aboutNights } from '../models/nights'
 import { rowsOf, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
@@ -110,7 +111,7 @@ function judgeMotion({ model, names, path, settled, measures, referenceEpochYr, 
       byObserver: statisticsByObserver(residuals, measures.all.map((measure) => measure.observer), Object.keys(SKY_UNITS)),
     },
     residuals, alternatives: [], proposals: [],
-    warnings: [model === 'line' ? 'Straight motion, no orbit: positions outside the arc hold only while the motion stays straight.' : 'No motion: the companion is taken to stand still.'],
+    warnings: [...aboutNights(measures.countedNights), model === 'line' ? 'Straight motion, no orbit: positions outside the arc hold only while the motion stays straight.' : 'No motion: the companion is taken to stand still.'],
     state: { model, names, values: Array.from(values), covariance: published, referenceEpochYr },
   }
 }

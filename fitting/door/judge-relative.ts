@@ -1,5 +1,6 @@
 /** From the solutions of a relative fit to its result: elements, errors, residuals, alternatives, warnings. */
 import { keplerPath, LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
+import { aboutNights } from '../models/nights'
 import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
 import type { SettledPath } from '../search/settle-path'
@@ -148,7 +149,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     residuals,
     alternatives,
     proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, context) : [],
-    warnings: relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
+    warnings: [...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }), ...aboutNights(measures.countedNights)],
     state: {
       model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),
       covariance: publishedCovariance(errors.covariance, errors.scale.published), referenceEpochYr,

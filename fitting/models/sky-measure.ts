@@ -1,11 +1,13 @@
 /**
  * Measures of a relative orbit made ready for the fit: sorted, with every error resolved.
  * Errors: where every used measure states its σ they are taken as stated (formal); where none does, all weigh alike: one σ in
- * arcsec, the same along and across (scaled); in a mixture the missing take the median stated (mixed).
+ * arcsec, the same along and across (scaled); in a mixture the missing take the median stated (mixed). A stated σ is that of the measure
+ * as given; the number of nights shapes only what was not stated.
  */
 import { atan2, hypot } from '../elementary'
 import { median } from '../solve/median'
 import type { FitSettings, FitStatistics, RelativeMeasure } from '../types'
+import { nightsFactor } from './nights'
 
 /** One measure with its errors; positions in arcsec, x = north, y = east. */
 export interface SkyMeasure {
@@ -29,6 +31,8 @@ export interface SkyMeasure {
   weight: number
   /** Factor on 1/σ² that a robust loss gives, 1 otherwise. */
   robustWeight: number
+  /** σ of the mean over σ of a single night, where σ is not stated; 1 for one night. */
+  nightsFactor: number
 }
 
 export type ErrorBasis = FitStatistics['errorBasis']
@@ -38,6 +42,8 @@ export interface SkyMeasures {
   all: SkyMeasure[]
   used: SkyMeasure[]
   basis: ErrorBasis
+  /** Used measures whose number of nights shaped an error that was not stated. */
+  countedNights: number
 }
 
 /** Errors of equal weight stand for this part of the median separation until the residuals tell. */
@@ -74,7 +80,7 @@ function withStatedErrors(measure: RelativeMeasure): SkyMeasure {
   const base = {
     id: measure.id, observer: measure.observer, epochYr: measure.epochYr, status: statusOf(measure), isAmbiguous: false,
     thetaRad: NaN, rhoArcsec: NaN, north: NaN, east: NaN, sigmaAlong: NaN, sigmaThetaRad: NaN, sigmaNorth: NaN, sigmaEast: NaN,
-    correlation: 0, weight: measure.weightFactor ?? 1, robustWeight: 1,
+    correlation: 0, weight: measure.weightFactor ?? 1, robustWeight: 1, nightsFactor: nightsFactor(measure.nights ?? 1),
   }
   if (position.form === 'limit') return { ...base, form: 'limit', rhoArcsec: position.rhoLimitArcsec }
   if (position.form === 'rectangular') {
@@ -102,21 +108,22 @@ function neededErrors(m: SkyMeasure): number[] {
 
 const isStated = (value: number) => value === value
 
-function withEqualErrors(m: SkyMeasure, sigmaArcsec: number, medianRho: number): SkyMeasure {
+/** One σ in arcsec along and across. */
+function withRoundError(m: SkyMeasure, sigmaArcsec: number, medianRho: number): SkyMeasure {
   const rho = m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho
   return { ...m, sigmaAlong: sigmaArcsec, sigmaThetaRad: sigmaArcsec / rho, sigmaNorth: sigmaArcsec, sigmaEast: sigmaArcsec, correlation: 0 }
 }
 
-/** Median stated errors, arcsec; each falls back to the other. */
+/** Median stated errors of a single night, arcsec; each falls back to the other. */
 function medianErrors(used: SkyMeasure[], medianRho: number): { along: number; across: number } {
-  const rectangular = used.flatMap((m) => [m.sigmaNorth, m.sigmaEast])
-  const along = median([...used.map((m) => m.sigmaAlong), ...rectangular].filter(isStated))
-  const across = median([...used.map((m) => m.sigmaThetaRad * (m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho)), ...rectangular].filter(isStated))
+  const rectangular = used.flatMap((m) => [m.sigmaNorth / m.nightsFactor, m.sigmaEast / m.nightsFactor])
+  const along = median([...used.map((m) => m.sigmaAlong / m.nightsFactor), ...rectangular].filter(isStated))
+  const across = median([...used.map((m) => (m.sigmaThetaRad * (m.rhoArcsec >= SMALLEST_RHO_ARCSEC ? m.rhoArcsec : medianRho)) / m.nightsFactor), ...rectangular].filter(isStated))
   return { along: isStated(along) ? along : across, across: isStated(across) ? across : along }
 }
 
 function withMissingErrors(m: SkyMeasure, errors: { along: number; across: number }, medianRho: number): SkyMeasure {
-  const fill = (value: number, instead: number) => (isStated(value) ? value : instead)
+  const fill = (value: number, instead: number) => (isStated(value) ? value : instead * m.nightsFactor)
   const both = (errors.along + errors.across) / 2
   return {
     ...m,
@@ -148,16 +155,18 @@ function basisOf(used: SkyMeasure[], settings: FitSettings): ErrorBasis {
  * @returns all measures and the used ones, both sorted, with the basis of their errors.
  */
 export function prepareSkyMeasures(measures: readonly RelativeMeasure[], settings: FitSettings): SkyMeasures {
-  const stated = [...measures].sort(compareMeasures).map(withStatedErrors)
+  const areNightsUsed = settings.weights !== 'equal'
+  const stated = [...measures].sort(compareMeasures).map(withStatedErrors).map((m) => (areNightsUsed ? m : { ...m, nightsFactor: 1 }))
   const used = stated.filter((m) => m.status === 'used')
   const basis = basisOf(used, settings)
   const medianRho = median(used.map((m) => m.rhoArcsec).filter((rho) => rho >= SMALLEST_RHO_ARCSEC))
   const errors = medianErrors(used, medianRho)
   const all = stated.map((m) => {
-    if (basis === 'scaled') return withEqualErrors(m, PROVISIONAL_SIGMA_PART * medianRho, medianRho)
+    if (basis === 'scaled') return withRoundError(m, PROVISIONAL_SIGMA_PART * medianRho * m.nightsFactor, medianRho)
     return scaleErrors(withMissingErrors(m, errors, medianRho), settings.sigmaScale ?? 1)
   })
-  return { all, used: all.filter((m) => m.status === 'used'), basis }
+  const countedNights = areNightsUsed ? stated.filter((m) => m.status === 'used' && m.nightsFactor !== 1 && !neededErrors(m).every(isStated)).length : 0
+  return { all, used: all.filter((m) => m.status === 'used'), basis, countedNights }
 }
 
 /**
