@@ -42,7 +42,7 @@ export async function settleComputed(tx: Tx, ctx: Context, fit: FitRecord, outco
 async function tellWaiting(tx: Tx, ctx: Context, fit: FitRecord, outcome: { headline: string; hasFailed: boolean }): Promise<void> {
   const target = await getTarget(tx, fit.target_id)
   await tellFitWaiting(tx, ctx, {
-    fit: { id: fit.id, number: fit.number, newMeasures: fit.new_measures, ...outcome },
+    fit: { id: fit.id, number: fit.number, newMeasures: fit.new_measures, askedById: fit.requested_by, ...outcome },
     target: { id: target.id, name: target.name, programmeId: target.programme_id, programmeName: target.programme_name },
   })
 }

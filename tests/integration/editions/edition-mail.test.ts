@@ -101,4 +101,11 @@ describe('the letters about the work', () => {
     expect(await readersOf('ruling-made')).toEqual(['Ossian Brandvik'])
     expect(house.mail.find(mail => mail.to === pair.observer.email)?.bodyText).toContain('The residuals show nothing')
   })
+
+  it('do not tell a coordinator of the refit that she asked for herself', async () => {
+    const fit = await sendPairMeasures(pair, { from: 1994, count: 12, seed: 3 })
+    expect(await readersOf('fit-waiting')).toEqual(['Mirelle Tasque'])
+    await setAside(pair.coordinator.ctx, fit, [{ measureId: fit.measures[3]!.id, reason: 'Clouds.' }])
+    expect(await readersOf('fit-waiting')).toEqual(['Mirelle Tasque'])
+  })
 })
