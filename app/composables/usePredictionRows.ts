@@ -52,7 +52,7 @@ function columnsOf(kind: Kind, radiusUnit: string | null): Column[] {
     ]
   }
   return [
-    { key: 'at', symbol: '', word: 'year', text: ({ at }) => formatNumber(at, Number.isInteger(at) ? 0 : 2) },
+    { key: 'at', symbol: '', word: 'year', text: ({ at }) => formatNumber(at, Number.isInteger(at) ? 1 : 2) },
     ...withSigma({ key: 'theta', symbol: 'θ', word: ', °' }, 'thetaDeg'),
     ...withSigma({ key: 'rho', symbol: 'ρ', word: ', ″' }, 'rhoArcsec'),
   ]

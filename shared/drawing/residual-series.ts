@@ -62,7 +62,7 @@ function keysOf({ kind, residuals }: FitResult): string[] {
 export type PredictedSigma = { at: number; sigmas: Record<string, number> }
 
 /**
- * The residuals as plots show them: one series a coordinate over a shared axis, arcseconds as milliarcseconds where all are small.
+ * The residuals as plots show them: one series a coordinate over a shared axis, arcseconds as milliarcseconds where all of them are small.
  * @param result a finished fit.
  * @param subjects the fitted measures, for their observers and places on the axis.
  * @param predicted σ of the prediction along the axis; may be empty.
@@ -71,12 +71,12 @@ export type PredictedSigma = { at: number; sigmas: Record<string, number> }
 export function residualChart(result: FitResult, subjects: readonly ResidualSubject[], predicted: readonly PredictedSigma[]): ResidualChart {
   const byId = new Map(subjects.map(subject => [subject.id, subject]))
   const isTimed = result.kind !== 'plane'
-  const series = keysOf(result).flatMap((key) => {
-    const points = result.residuals.flatMap(residual => pointOf(residual, key, byId.get(residual.id), isTimed))
-    if (points.length === 0) return []
-    const { factor, unit } = scaleOf(key, points, result)
+  const pointsByKey = keysOf(result).map(key => ({ key, points: result.residuals.flatMap(residual => pointOf(residual, key, byId.get(residual.id), isTimed)) }))
+  const all = pointsByKey.flatMap(({ points }) => points)
+  const series = pointsByKey.filter(({ points }) => points.length > 0).map(({ key, points }) => {
+    const { factor, unit } = scaleOf(key, all, result)
     const band = predicted.flatMap(({ at, sigmas }) => sigmas[key] === undefined ? [] : [{ at, sigma: sigmas[key] * factor }])
-    return [{ key, ...(COORDINATES[key] ?? { name: key, symbols: key }), unit, band, points: points.map(point => ({ ...point, value: point.value * factor })) }]
+    return { key, ...(COORDINATES[key] ?? { name: key, symbols: key }), unit, band, points: points.map(point => ({ ...point, value: point.value * factor })) }
   })
   if (result.kind === 'equatorial') return { axis: 'date', axisName: 'date', series }
   return { axis: isTimed ? 'time' : 'direction', axisName: isTimed ? 'year' : 'φ, °', series }
@@ -89,11 +89,12 @@ function pointOf(residual: Residual, key: string, subject: ResidualSubject | und
   return [{ id: residual.id, observer: subject.observer, at, value, status: residual.status }]
 }
 
-function scaleOf(key: string, points: readonly ResidualPoint[], result: FitResult): { factor: number; unit: string } {
+/** Both arcsecond coordinates of a pair share a unit, so that their plots compare: `all` are the points of all series. */
+function scaleOf(key: string, all: readonly ResidualPoint[], result: FitResult): { factor: number; unit: string } {
   if (key.endsWith('Arcmin')) return { factor: 60, unit: '″' }
   if (!key.endsWith('Arcsec')) return { factor: 1, unit: result.conic?.semiLatusRectum.unit ?? 'unit' }
   if (result.kind === 'equatorial') return { factor: 1, unit: '″' }
-  const isSmall = points.every(point => Math.abs(point.value) < 1 || point.status !== 'used')
+  const isSmall = all.every(point => Math.abs(point.value) < 1 || point.status !== 'used')
   return isSmall ? { factor: 1000, unit: 'mas' } : { factor: 1, unit: '″' }
 }
 
