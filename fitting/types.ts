@@ -57,6 +57,8 @@ export interface RelativeMeasure extends MeasureBase {
   position: PolarPosition | RectangularPosition | LimitPosition
   /** Number of nights in the mean, ≥ 1; shapes σ only where it is not stated. */
   nights?: number
+  /** How it was measured, compared for equality only: errors by observer are errors by observer and method. */
+  method?: string
 }
 
 export interface PlaneMeasure extends MeasureBase {
@@ -252,6 +254,19 @@ export interface HonestArc {
   statement: string
 }
 
+/** The error of one observer's measures by one method, estimated from their residuals. */
+export interface ObserverError {
+  observer: string
+  method: string | null
+  measures: number
+  /** σ of a single night, the same along and across. */
+  sigmaArcsec: number
+  /** Weight of one measure against one of the typical σ. */
+  weight: number
+  /** estimated: from the group's own residuals; typical: too few measures, so the median σ of the others; floor: 0.3 of that. */
+  basis: 'estimated' | 'typical' | 'floor'
+}
+
 export interface FitStatistics {
   measures: number
   used: number
@@ -267,6 +282,8 @@ export interface FitStatistics {
   errorBasis: 'formal' | 'scaled' | 'mixed'
   /** Where errors were estimated (scaled): the standard error of every measure alike, in arcsec or by coordinate of a plane fit. */
   estimatedSigma?: Record<string, { value: number; unit: string }>
+  /** Weights 'by-observer': the errors of each observer and method. */
+  observerErrors?: ObserverError[]
   /** Parameters that the measures determine; below `parameters` the problem is singular. */
   rank?: number
   arc: {
@@ -322,10 +339,11 @@ export interface Prediction {
 export type MeasureSigma =
   | { kind: 'relative'; sigmaThetaRad: number; sigmaRhoArcsec: number }
   | { kind: 'plane'; sigmaR: number }
+  | { kind: 'equatorial'; sigmaRaCosDecArcsec: number; sigmaDecArcsec: number }
 
 /** What one more measure would add. */
 export interface Gain {
-  /** relative: Julian year; plane: φ in degrees. */
+  /** relative: Julian year; plane: φ in degrees; equatorial: JD of TT. */
   at: number
   /** Information gained, ½ ln det(I + G C Gᵀ), natural units, ≥ 0. */
   information: number

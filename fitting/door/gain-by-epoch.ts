@@ -4,11 +4,15 @@
  * Source: Fedorov 1972, Theory of Optimal Experiments (D-optimal designs).
  */
 import { cos, DEG, hypot, log, sin } from '../elementary'
+import { orbitOfState } from '../models/equatorial-orbit'
 import { keplerPath } from '../models/relative-kepler'
+import { ARCSEC_RAD } from '../models/sighting'
 import type { FitResult, FitState, Gain, MeasureSigma } from '../types'
+import { equatorialElements } from '../uncertainty/equatorial-elements'
 import { quadraticForm, type Quantity } from '../uncertainty/error-scale'
 import { ELEMENT_NAMES, relativeElements } from '../uncertainty/relative-elements'
 import { planeQuantities } from './judge-plane'
+import { skyGradientsAt } from './predict-equatorial'
 
 /** Whitened gradient rows of a planned measure; empty where the conic does not reach that direction. */
 type RowsAt = (at: number) => Float64Array[]
@@ -53,8 +57,29 @@ function updated(covariance: number[][], rows: readonly Float64Array[]): { covar
   return { covariance: current, information }
 }
 
+function sightRowsAt(state: FitState, sigma: Extract<MeasureSigma, { kind: 'equatorial' }>): RowsAt {
+  const gradientsAt = skyGradientsAt(state)
+  return (jdTt) => {
+    const gradients = gradientsAt(jdTt)
+    return gradients === null ? [] : [
+      gradients.east.map((part) => part / (sigma.sigmaRaCosDecArcsec * ARCSEC_RAD)), gradients.north.map((part) => part / (sigma.sigmaDecArcsec * ARCSEC_RAD)),
+    ]
+  }
+}
+
+function rowsAtOf(state: FitState, sigma: MeasureSigma): RowsAt {
+  if (sigma.kind === 'plane') return planeRowsAt(state, sigma)
+  return sigma.kind === 'relative' ? skyRowsAt(state, sigma) : sightRowsAt(state, sigma)
+}
+
+function errorsOf(sigma: MeasureSigma): number[] {
+  if (sigma.kind === 'plane') return [sigma.sigmaR]
+  return sigma.kind === 'relative' ? [sigma.sigmaThetaRad, sigma.sigmaRhoArcsec] : [sigma.sigmaRaCosDecArcsec, sigma.sigmaDecArcsec]
+}
+
 function quantitiesOf(result: FitResult): Record<string, Quantity> {
   const { state } = result
+  if (result.kind === 'equatorial') return equatorialElements(orbitOfState(state), state.values, state.reference!.jdTt).quantities
   if (result.kind === 'plane') return planeQuantities(state.values, result.elements.semiLatusRectum?.unit ?? '')
   const lastEpochYr = result.statistics.arc.lastEpochYr ?? state.referenceEpochYr
   const { quantities } = relativeElements({ values: state.values, covariance: state.covariance, referenceEpochYr: state.referenceEpochYr, lastEpochYr })
@@ -64,7 +89,7 @@ function quantitiesOf(result: FitResult): Record<string, Quantity> {
 /**
  * Gain of one more measure at each of several dates or directions.
  * @param result an orbit of fitOrbit (model kepler) with errors.
- * @param at epochs, Julian years (relative), or directions φ, degrees (plane); finite.
+ * @param at epochs, Julian years (relative) or JD of TT (equatorial), or directions φ, degrees (plane); finite.
  * @param sigma errors that the planned measure would have, > 0.
  * @returns one gain each; information 0 where the conic does not reach, sigmasAfter null where an element is not determined.
  * @throws RangeError without errors in the result, for another kind or model, or for numbers that are none (a programmer's error).
@@ -74,9 +99,9 @@ export function gainByEpoch(result: FitResult, at: readonly number[], sigma: Mea
   const { covariance } = result.state
   if (covariance === null) throw new RangeError('gainByEpoch: the result has no errors to improve.')
   if (result.kind !== sigma.kind || result.model !== 'kepler') throw new RangeError('gainByEpoch: the errors do not belong to this kind of orbit.')
-  const errors = sigma.kind === 'plane' ? [sigma.sigmaR] : [sigma.sigmaThetaRad, sigma.sigmaRhoArcsec]
+  const errors = errorsOf(sigma)
   if (![...at, ...errors].every((value) => value - value === 0) || errors.some((value) => !(value > 0))) throw new RangeError('gainByEpoch: dates and errors must be finite numbers, errors above 0.')
-  const rowsAt = sigma.kind === 'plane' ? planeRowsAt(result.state, sigma) : skyRowsAt(result.state, sigma)
+  const rowsAt = rowsAtOf(result.state, sigma)
   const quantities = quantitiesOf(result)
   return at.map((when) => {
     const after = updated(covariance, rowsAt(when))

@@ -47,17 +47,17 @@ function parabolaOf({ parabolaChiSquare }: EquatorialJudgement, { settled, eleme
 interface Judged {
   settled: SettledSights
   elements: EquatorialElements
-  errors: Errors & { conditionNumber: number }
+  errors: Errors & { conditionNumber: number; rank: number }
 }
 
 function judged(settled: SettledSights, sightings: Sightings): Judged {
   const { solution, orbit } = settled
   const { residuals, jacobian, values, chiSquare } = solution
-  const { matrix, conditionNumber } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
+  const { matrix, conditionNumber, rank } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
   return {
     settled,
     elements: equatorialElements(orbit, values, orbit.reference.jdTt),
-    errors: { covariance: matrix, conditionNumber, scale: errorScale(sightings.basis, chiSquare, residuals.length - values.length) },
+    errors: { covariance: matrix, conditionNumber, rank, scale: errorScale(sightings.basis, chiSquare, residuals.length - values.length) },
   }
 }
 
@@ -94,6 +94,8 @@ function statisticsOf(best: Judged, { sightings }: EquatorialJudgement, findings
     reducedChiSquare: degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null,
     conditionNumber: best.errors.conditionNumber < Infinity ? best.errors.conditionNumber : null,
     errorBasis: sightings.basis,
+    rank: best.errors.rank,
+    ...(sightings.basis === 'scaled' ? { estimatedSigma: { position: { value: sightings.used[0]!.sigmaEastArcsec, unit: 'arcsec' } } } : {}),
     arc: equatorialArc(findings),
   }
 }

@@ -89,6 +89,46 @@ function valuesOf({ found, earth, sunVelocity }: Seen): Record<string, number> {
   }
 }
 
+/** What `begun` gives: the line of sight from the Earth's centre at a date. */
+interface Begun {
+  byParameter: Float64Array
+  parameters: number
+  /** null where the motion cannot be followed. */
+  seenAt: (jdTt: number) => Seen | null
+}
+
+function begun(state: FitState): Begun {
+  const orbit = orbitOfState(state)
+  const { parameters } = orbit.map
+  const start = new Float64Array(6)
+  const byParameter = new Float64Array(6 * parameters)
+  orbit.map.stateInto(state.values, start, byParameter)
+  const isBegun = orbit.motion.begin(stateOfValues(orbit, state.values), true)
+  const [earth, sunVelocity, found] = [new Float64Array(6), new Float64Array(3), emptyLineOfSight()]
+  return {
+    byParameter, parameters,
+    seenAt(jdTt) {
+      earthHeliocentric(jdTt, earth)
+      sunBarycentricVelocity(jdTt, sunVelocity)
+      const sight = { jdTt, observer: earth.subarray(0, 3), sunVelocity }
+      return isBegun && lineOfSightInto(sight, orbit.motion, roughLightTime(sight, start), found, true) ? { found, earth, sunVelocity } : null
+    },
+  }
+}
+
+/**
+ * Derivatives of the direction by the fitted parameters.
+ * @param state of a result of the kind equatorial.
+ * @returns a function of JD of TT: derivatives of α cos δ and δ (rad) and of the distance (au); null where the motion cannot be followed.
+ */
+export function skyGradientsAt(state: FitState): (jdTt: number) => Gradients | null {
+  const { seenAt, byParameter, parameters } = begun(state)
+  return (jdTt) => {
+    const seen = seenAt(jdTt)
+    return seen && gradientsOf(seen.found, byParameter, parameters)
+  }
+}
+
 /**
  * Places at dates.
  * @param state of a result of the kind equatorial.
@@ -99,24 +139,14 @@ function valuesOf({ found, earth, sunVelocity }: Seen): Record<string, number> {
  * Source: Bevington & Robinson (2003), 3.2.
  */
 export function predictEquatorial(state: FitState, at: readonly number[]): Prediction[] {
-  const orbit = orbitOfState(state)
-  const { parameters: p } = orbit.map
-  const start = new Float64Array(6)
-  const byParameter = new Float64Array(6 * p)
-  orbit.map.stateInto(state.values, start, byParameter)
-  const isBegun = orbit.motion.begin(stateOfValues(orbit, state.values), true)
-  const earth = new Float64Array(6)
-  const sunVelocity = new Float64Array(3)
-  const found = emptyLineOfSight()
+  const { seenAt, byParameter, parameters } = begun(state)
   return at.map((jdTt) => {
-    earthHeliocentric(jdTt, earth)
-    sunBarycentricVelocity(jdTt, sunVelocity)
-    const sight = { jdTt, observer: earth.subarray(0, 3), sunVelocity }
-    const none: Prediction = { at: jdTt, values: {}, sigmas: {}, correlation: null }
-    if (!isBegun || !lineOfSightInto(sight, orbit.motion, roughLightTime(sight, start), found, true)) return none
-    const values = valuesOf({ found, earth, sunVelocity })
+    const seen = seenAt(jdTt)
+    if (seen === null) return { at: jdTt, values: {}, sigmas: {}, correlation: null }
+    const { found } = seen
+    const values = valuesOf(seen)
     const level = Math.sqrt(found.line[0]! * found.line[0]! + found.line[1]! * found.line[1]!) / found.distance
-    const { ellipse, sigmas, correlation } = errorsOf(state.covariance, gradientsOf(found, byParameter, p), level)
+    const { ellipse, sigmas, correlation } = errorsOf(state.covariance, gradientsOf(found, byParameter, parameters), level)
     if (ellipse !== null) {
       values.errorMajorArcsec = ellipse.major / ARCSEC_RAD
       values.errorMinorArcsec = ellipse.minor / ARCSEC_RAD

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { fitOrbit, predict, type EquatorialMeasure, type FitOutcome, type FitResult, type FitSettings } from '../../../../fitting'
+import { compareFits, fitOrbit, gainByEpoch, predict, stateOfElements, type EquatorialMeasure, type FitOutcome, type FitResult, type FitSettings } from '../../../../fitting'
 import { planetMotion } from '../../../../fitting/models/planet-motion'
 import { ORBIT_CLASSES, simulatedSightings, truthAt } from '../../../builders/simulated-sightings'
 
@@ -158,6 +158,44 @@ describe('predict', () => {
     expect(errorMajorArcsec ** 2 + errorMinorArcsec ** 2).toBeCloseTo(sigmaAlpha ** 2 + (now!.sigmas.decDeg! * 3600) ** 2, 6)
     expect(now!.values.phaseAngleDeg).toBeGreaterThan(0)
     expect(now!.values.elongationDeg).toBeLessThanOrEqual(180)
+  })
+})
+
+describe('known elements', () => {
+  it('are predicted from as the fit to their places is', () => {
+    const simulated = simulatedSightings({ seed: 51, orbitClass: 'near-parabolic', arcDays: [40, 50], sigmaArcsec: 0 })
+    const result = fitted(simulated.measures)
+    const at = result.epochOfElements! + 20
+    const [known] = predict({ kind: 'equatorial', state: stateOfElements(truthAt(simulated, at), at) }, [at])
+    const [fit] = predict(result, [at])
+    expect(Math.abs(known!.values.decDeg! - fit!.values.decDeg!) * 3600).toBeLessThan(0.01)
+    expect(known!.values.distanceAu).toBeCloseTo(fit!.values.distanceAu!, 5)
+    expect(known!.sigmas.decDeg).toBeNull()
+  })
+})
+
+describe('planning and merging', () => {
+  const { measures } = simulatedSightings({ seed: 61, orbitClass: 'main belt', arcDays: [40, 50], count: 24 })
+  const sigma = { kind: 'equatorial', sigmaRaCosDecArcsec: 0.5, sigmaDecArcsec: 0.5 } as const
+
+  it('one more night tightens the elements as a refit with it does', () => {
+    const [first, added] = [measures.slice(0, 23), measures.slice(23)]
+    const before = fitted(first)
+    const jdTt = added[0]!.jdUtc + 66.184 / 86400
+    const [gain] = gainByEpoch(before, [jdTt], sigma)
+    const after = fitted(measures)
+    expect(gain!.information).toBeGreaterThan(0)
+    for (const name of ['perihelionDistance', 'eccentricity', 'inclination'] as const) {
+      expect(gain!.sigmasAfter[name]! / after.elements[name]!.sigmaFormal!, name).toBeCloseTo(1, 1)
+      expect(gain!.sigmasAfter[name]!).toBeLessThanOrEqual(before.elements[name]!.sigma!)
+    }
+  })
+
+  it('batches of one body agree, those with an offset do not', () => {
+    const shifted = measures.slice(12).map((measure) => ({ ...measure, decRad: measure.decRad + 5e-5 }))
+    const agreement = (a: EquatorialMeasure[], b: EquatorialMeasure[]) => compareFits([fitted(a), fitted(b)], fitted([...a, ...b]))
+    expect(agreement(measures.slice(0, 12), measures.slice(12)).probabilityF!).toBeGreaterThan(0.01)
+    expect(agreement(measures.slice(0, 12), shifted).probabilityF!).toBeLessThan(0.01)
   })
 })
 
