@@ -5,8 +5,9 @@ import { aboutNights } from '../models/nights'
 import { rowsOf, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
+import type { RobustlySettled } from '../search/settle-robustly'
 import { covarianceOf } from '../solve/covariance'
-import type { FitResult, FitStatistics } from '../types'
+import type { FitResult, FitStatistics, ObserverError } from '../types'
 import { elementOf, errorScale, quadraticForm, type Quantity } from '../uncertainty/error-scale'
 import { lineElements, stillElements } from '../uncertainty/line-elements'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
@@ -16,6 +17,7 @@ import { ENGINE_VERSION } from '../version'
 import { estimatedSigma, withEstimatedErrors } from './estimated-errors'
 import type { RelativeRequest } from './fit-relative'
 import { publishedCovariance, SKY_UNITS } from './judge-relative'
+import { settleByObserver } from './observer-errors'
 import { refuse } from './refusal'
 import { stopSentence } from './stop-sentence'
 
@@ -49,6 +51,14 @@ function arcOf({ used }: SkyMeasures, path: SkyPath, values: ArrayLike<number>):
   return { firstEpochYr, lastEpochYr, turns: null, trueAnomalyCoveredDeg: null, positionAngleCoveredDeg: Math.min(swept, 360 - swept) }
 }
 
+/** The fit with the errors that its residuals show, where errors come from them; else the fit as it is. */
+function withErrorsFromResiduals(request: RelativeRequest, path: SkyPath, first: RobustlySettled): RobustlySettled & { observerErrors?: ObserverError[] } {
+  const again = (measures: SkyMeasures, before: readonly SettledPath[]) => ({ measures, solutions: [settlePath(path, measures.used, before[0]!.solution.values)] })
+  if (request.settings.weights === 'by-observer') return settleByObserver(first, again)
+  const measures = withEstimatedErrors(first.measures, first.solutions[0]!)
+  return measures === first.measures ? first : again(measures, first.solutions)
+}
+
 /**
  * Fits straight motion or rest.
  * @param request with settings.model 'line' or 'still'.
@@ -65,10 +75,9 @@ export function fitMotion(request: RelativeRequest, prepared: SkyMeasures): FitR
   if (rowCount < names.length) refuse('too-few-measures', `This motion has ${names.length} unknowns; ${rowCount} coordinates are used.`, 'Add measures.')
   const first = settleStarts(path, used, [start], () => undefined)[0]
   if (first === undefined) refuse('no-orbit-found', 'The motion begins at the primary itself, where a position angle has no meaning.', 'Look for mistyped values among the measures.')
-  const measures = withEstimatedErrors(prepared, first)
-  const settled = measures === prepared ? first : settlePath(path, measures.used, first.solution.values)
+  const { measures, solutions, observerErrors } = withErrorsFromResiduals(request, path, { measures: prepared, solutions: [first] })
   request.report('polishing', 1)
-  const result = judgeMotion({ model, names, path, settled, measures, referenceEpochYr, seed: request.settings.seed ?? 1, equinox: request.settings.thetaEquinox ?? 2000 })
+  const result = judgeMotion({ model, names, path, settled: solutions[0]!, measures, observerErrors, referenceEpochYr, seed: request.settings.seed ?? 1, equinox: request.settings.thetaEquinox ?? 2000 })
   request.report('judging', 1)
   return result
 }
@@ -79,12 +88,13 @@ interface MotionJudgement {
   path: SkyPath
   settled: SettledPath
   measures: SkyMeasures
+  observerErrors?: ObserverError[]
   referenceEpochYr: number
   seed: number
   equinox: number
 }
 
-function judgeMotion({ model, names, path, settled, measures, referenceEpochYr, seed, equinox }: MotionJudgement): FitResult {
+function judgeMotion({ model, names, path, settled, measures, observerErrors, referenceEpochYr, seed, equinox }: MotionJudgement): FitResult {
   const { values, residuals: rows, jacobian, chiSquare, reason } = settled.solution
   const degreesOfFreedom = rows.length - values.length
   const { matrix, conditionNumber, rank } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
@@ -106,7 +116,7 @@ function judgeMotion({ model, names, path, settled, measures, referenceEpochYr, 
     constants: null,
     statistics: {
       measures: measures.all.length, used: measures.used.length, rows: rows.length, parameters: values.length, degreesOfFreedom, chiSquare, reducedChiSquare,
-      rms: rmsByCoordinate(residuals, SKY_UNITS), conditionNumber: conditionNumber < Infinity ? conditionNumber : null, errorBasis: measures.basis, rank, ...estimatedSigma(measures),
+      rms: rmsByCoordinate(residuals, SKY_UNITS), conditionNumber: conditionNumber < Infinity ? conditionNumber : null, errorBasis: measures.basis, rank, ...(observerErrors ? { observerErrors } : estimatedSigma(measures)),
       arc: arcOf(measures, path, values),
       byObserver: statisticsByObserver(residuals, measures.all.map((measure) => measure.observer), Object.keys(SKY_UNITS)),
     },

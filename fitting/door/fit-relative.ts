@@ -4,12 +4,13 @@ import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type Sk
 import { searchRelative, type SearchRequest } from '../search/blind-search'
 import { searchRobustly } from '../search/robust-search'
 import { preferredSolution } from '../search/prefer-longer'
-import { settlePath, settleStarts } from '../search/settle-path'
+import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
 import { settleRobustly, type RobustlySettled } from '../search/settle-robustly'
-import type { FitResult, FitSettings, FitStart, RelativeMeasure } from '../types'
+import type { FitResult, FitSettings, FitStart, ObserverError, RelativeMeasure } from '../types'
 import { withEstimatedErrors } from './estimated-errors'
 import { fitMotion } from './fit-motion'
 import { judgeRelative } from './judge-relative'
+import { settleByObserver } from './observer-errors'
 import type { Report } from './progress'
 import { refuse } from './refusal'
 import { validateRelative } from './validate-measures'
@@ -94,6 +95,14 @@ function settleAll(request: RelativeRequest, measures: SkyMeasures, starts: Arra
   return { measures: settled.measures, solutions: [settlePath(path, settled.measures.used, preferred.solution.values), ...others] }
 }
 
+/** The fit with the errors that its residuals show, where errors come from them; else the fit as it is. */
+function withErrorsFromResiduals(request: RelativeRequest, provisional: RobustlySettled, referenceEpochYr: number): RobustlySettled & { observerErrors?: ObserverError[] } {
+  const again = (measures: SkyMeasures, before: readonly SettledPath[]) => settleAll(request, measures, before.map((settled) => settled.solution.values), referenceEpochYr)
+  if (request.settings.weights === 'by-observer') return settleByObserver(provisional, again)
+  const estimated = withEstimatedErrors(provisional.measures, provisional.solutions[0]!)
+  return estimated === provisional.measures ? provisional : again(estimated, provisional.solutions)
+}
+
 /**
  * Fits a relative orbit, straight motion or rest.
  * @param request with checked list and settings.
@@ -111,10 +120,8 @@ export function fitRelative(request: RelativeRequest): FitResult {
   const starts = startsOf(request, prepared, middle)
   const provisional = settleAll(request, prepared, starts, referenceEpochYr)
   if (provisional.solutions.length === 0) refuse('no-orbit-found', 'The search found no orbit for these measures.', 'Look for changed quadrants and mistyped epochs, or fit a straight line.')
-  const estimated = withEstimatedErrors(provisional.measures, provisional.solutions[0]!)
-  const { measures, solutions } = estimated === provisional.measures ? provisional
-    : settleAll(request, estimated, provisional.solutions.map((settled) => settled.solution.values), referenceEpochYr)
-  const result = judgeRelative({ solutions, measures, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
+  const { measures, solutions, observerErrors } = withErrorsFromResiduals(request, provisional, referenceEpochYr)
+  const result = judgeRelative({ solutions, measures, observerErrors, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
   request.report('judging', 1)
   return result
 }

@@ -5,7 +5,7 @@ import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
 import type { SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
-import type { Alternative, Element, FitResult, FitSettings, FitStatistics } from '../types'
+import type { Alternative, Element, FitResult, FitSettings, FitStatistics, ObserverError } from '../types'
 import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
@@ -32,6 +32,8 @@ export interface Judgement {
   measures: SkyMeasures
   referenceEpochYr: number
   settings: FitSettings
+  /** Where errors were estimated by observer. */
+  observerErrors?: ObserverError[]
   alternativeWithin: number
 }
 
@@ -99,7 +101,7 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; r
     conditionNumber: errors.conditionNumber < Infinity ? errors.conditionNumber : null,
     errorBasis: measures.basis,
     rank: errors.rank,
-    ...estimatedSigma(measures),
+    ...(judgement.observerErrors ? { observerErrors: judgement.observerErrors } : estimatedSigma(measures)),
     arc: relativeArc(elements, used[0]!.epochYr, used[used.length - 1]!.epochYr),
   }
 }

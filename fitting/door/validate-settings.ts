@@ -28,7 +28,7 @@ const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
 
 /** Served models and weights of this engine version. */
 const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: ['kepler'] }
-const WEIGHTS: readonly string[] = ['stated', 'equal']
+const WEIGHTS: Record<Kind, readonly string[]> = { relative: ['stated', 'equal', 'by-observer'], plane: ['stated', 'equal'], equatorial: ['stated', 'equal'] }
 
 /** The biweight is served for orbits of double stars only. */
 function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
@@ -76,7 +76,7 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
   if (!isLossServed(kind, settings)) {
     refuse('setting-not-available', `The loss ${settings.loss} is not available for this fit.`, 'Leave it out for least squares; biweight is available for orbits of double stars.')
   }
-  if (settings.weights !== undefined && !WEIGHTS.includes(settings.weights)) {
-    refuse('setting-not-available', `The weights ${settings.weights} are not available in this version of the engine.`, LATER)
+  if (settings.weights !== undefined && !WEIGHTS[kind].includes(settings.weights)) {
+    refuse('setting-not-available', `The weights ${settings.weights} are not available for ${kind} fits.`, LATER)
   }
 }

@@ -13,6 +13,8 @@ import { nightsFactor } from './nights'
 export interface SkyMeasure {
   id: string
   observer: string
+  /** How it was measured, where the request says so. */
+  method: string | null
   epochYr: number
   form: 'polar' | 'rectangular' | 'theta' | 'rho' | 'limit'
   status: 'used' | 'set-aside' | 'not-fitted'
@@ -78,7 +80,7 @@ function statusOf(measure: RelativeMeasure): SkyMeasure['status'] {
 function withStatedErrors(measure: RelativeMeasure): SkyMeasure {
   const { position } = measure
   const base = {
-    id: measure.id, observer: measure.observer, epochYr: measure.epochYr, status: statusOf(measure), isAmbiguous: false,
+    id: measure.id, observer: measure.observer, method: measure.method ?? null, epochYr: measure.epochYr, status: statusOf(measure), isAmbiguous: false,
     thetaRad: NaN, rhoArcsec: NaN, north: NaN, east: NaN, sigmaAlong: NaN, sigmaThetaRad: NaN, sigmaNorth: NaN, sigmaEast: NaN,
     correlation: 0, weight: measure.weightFactor ?? 1, robustWeight: 1, nightsFactor: nightsFactor(measure.nights ?? 1),
   }
@@ -142,7 +144,7 @@ function scaleErrors(m: SkyMeasure, factor: number): SkyMeasure {
 }
 
 function basisOf(used: SkyMeasure[], settings: FitSettings): ErrorBasis {
-  if (settings.weights === 'equal') return 'scaled'
+  if (settings.weights === 'equal' || settings.weights === 'by-observer') return 'scaled'
   const errors = used.flatMap(neededErrors)
   const stated = errors.filter(isStated).length
   return stated === errors.length ? 'formal' : stated === 0 ? 'scaled' : 'mixed'
@@ -151,7 +153,7 @@ function basisOf(used: SkyMeasure[], settings: FitSettings): ErrorBasis {
 /**
  * Sorts measures and resolves their errors.
  * @param measures validated; at least one used measure with a separation.
- * @param settings weights 'stated' (default) or 'equal'; sigmaScale multiplies every error.
+ * @param settings weights 'stated' (default), 'equal' or 'by-observer' (both begin with one σ for all); sigmaScale multiplies every error.
  * @returns all measures and the used ones, both sorted, with the basis of their errors.
  */
 export function prepareSkyMeasures(measures: readonly RelativeMeasure[], settings: FitSettings): SkyMeasures {
@@ -177,6 +179,21 @@ export function prepareSkyMeasures(measures: readonly RelativeMeasure[], setting
  */
 export function rescaleSkyMeasures(measures: SkyMeasures, factor: number): SkyMeasures {
   const all = measures.all.map((m) => scaleErrors(m, factor))
+  return { ...measures, all, used: all.filter((m) => m.status === 'used') }
+}
+
+/**
+ * Gives every measure one σ along and across.
+ * @param measures as prepared.
+ * @param sigmaOf σ of a single night, arcsec; where it is NaN (a measure that is not used, of an unknown group) the measure stays as it is.
+ * @returns the same measures with these errors, those of means of several nights being smaller.
+ */
+export function withGroupErrors(measures: SkyMeasures, sigmaOf: (measure: SkyMeasure) => number): SkyMeasures {
+  const medianRho = median(measures.used.map((m) => m.rhoArcsec).filter((rho) => rho >= SMALLEST_RHO_ARCSEC))
+  const all = measures.all.map((m) => {
+    const sigma = sigmaOf(m)
+    return isStated(sigma) ? withRoundError(m, sigma * m.nightsFactor, medianRho) : m
+  })
   return { ...measures, all, used: all.filter((m) => m.status === 'used') }
 }
 

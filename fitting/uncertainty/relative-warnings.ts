@@ -81,7 +81,8 @@ function aboutScatter({ statistics, residuals }: RelativeFindings): string[] {
   const warnings: string[] = []
   const { errorBasis, reducedChiSquare, degreesOfFreedom } = statistics
   if (errorBasis === 'mixed') warnings.push('Some measures state no error; the median of the stated errors was taken for them.')
-  if (errorBasis === 'scaled') warnings.push('No measure states an error: all weigh alike, and errors come from the scatter of the residuals.')
+  if (statistics.observerErrors) warnings.push('Stated errors were set aside: the error of each observer and method comes from the scatter of its residuals.')
+  else if (errorBasis === 'scaled') warnings.push('No measure states an error: all weigh alike, and errors come from the scatter of the residuals.')
   if (degreesOfFreedom === 0) warnings.push('There are as many rows as parameters: the orbit passes through every measure and nothing tests it.')
   if (errorBasis !== 'scaled' && reducedChiSquare !== null && reducedChiSquare > LARGE_SCATTER) {
     warnings.push(`The scatter is ${round(Math.sqrt(reducedChiSquare), 1)} times what the stated errors say: look for offsets, changed quadrants or errors stated too small.`)

@@ -85,7 +85,6 @@ describe('settings are served or refused, never ignored', () => {
     ['setting-not-available', { forces: 'planets' }],
     ['setting-not-available', { normalPoints: true }],
     ['setting-not-available', { thetaEquinox: 1950 }],
-    ['setting-not-available', { weights: 'by-observer' }],
     ['setting-not-available', { diameterScaleArcmin: 30 }],
     ['setting-not-available', { invented: 1 }],
     ['setting-out-of-range', { loss: 'cubes' }],
