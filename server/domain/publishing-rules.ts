@@ -11,6 +11,8 @@ export interface PublishingRules {
 export interface PublishingCase {
   measuresUsed: number
   observersUsed: number
+  /** Straight motion and rest have no turn that could be covered. */
+  isOrbit: boolean
   /** How much of a turn the measures cover; null where nothing says. */
   arcTurns: number | null
   /** Why no edition can stand on this result whatever the programme asks for, in sentences. */
@@ -26,6 +28,7 @@ export function publishingCase(result: FitResult, consents: number): PublishingC
   return {
     measuresUsed: used,
     observersUsed: byObserver.filter(o => o.measures > 0).length,
+    isOrbit: result.model === 'kepler',
     arcTurns: arc.turns ?? (coveredDeg === null ? null : coveredDeg / 360),
     hindrances: hindrancesOf(result),
     consents,
@@ -55,7 +58,7 @@ export function unmetRules(rules: PublishingRules, found: PublishingCase): strin
   if (found.observersUsed < rules.leastObservers) {
     unmet.push(`The programme asks for at least ${rules.leastObservers} observers; the measures used are by ${found.observersUsed}.`)
   }
-  if (rules.leastArcTurns > 0 && (found.arcTurns === null || found.arcTurns < rules.leastArcTurns)) {
+  if (found.isOrbit && rules.leastArcTurns > 0 && (found.arcTurns === null || found.arcTurns < rules.leastArcTurns)) {
     const covered = found.arcTurns === null ? 'how much these cover is not known' : `these cover ${formatNumber(found.arcTurns, 2)}`
     unmet.push(`The programme asks for measures over at least ${rules.leastArcTurns} of a turn; ${covered}.`)
   }

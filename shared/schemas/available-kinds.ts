@@ -1,7 +1,7 @@
 import type { Kind } from '../../fitting/types'
 
 /** The kinds whose measures can be sent, fitted and published; for a kind that is missing here every door says so. */
-export const AVAILABLE_KINDS: readonly Kind[] = ['relative', 'plane']
+export const AVAILABLE_KINDS: readonly Kind[] = ['relative', 'equatorial', 'plane']
 
 export function isAvailableKind(kind: Kind): boolean {
   return AVAILABLE_KINDS.includes(kind)

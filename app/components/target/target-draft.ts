@@ -1,9 +1,10 @@
 import type { InputOf } from '#shared/schemas/parse'
 import type { createTargetSchema } from '#shared/schemas/targets'
+import type { Kind } from '~~/fitting/types'
 
 /** What the form for a new target holds: text as typed. */
 export interface TargetDraft {
-  kind: 'relative' | 'plane'
+  kind: Kind
   programmeId: string
   name: string
   aliases: string
@@ -19,7 +20,7 @@ export function blankTarget(programmeId: string): TargetDraft {
   return { kind: 'relative', programmeId, name: '', aliases: '', componentA: '', componentB: '', radiusUnit: '', diameterScaleArcmin: '', isSun: false, remarks: '' }
 }
 
-/** The body for POST /targets; fields of the other kind are left out, empty ones go as null. */
+/** The body for POST /targets; fields of other kinds are left out, empty ones go as null. */
 export function targetBody(draft: TargetDraft): InputOf<typeof createTargetSchema> {
   const common = {
     programmeId: draft.programmeId,
@@ -29,6 +30,7 @@ export function targetBody(draft: TargetDraft): InputOf<typeof createTargetSchem
     remarks: draft.remarks,
   }
   if (draft.kind === 'relative') return { ...common, componentA: draft.componentA || null, componentB: draft.componentB || null }
+  if (draft.kind === 'equatorial') return common
   return {
     ...common,
     radiusUnit: draft.radiusUnit || null,

@@ -4,6 +4,8 @@ import type { FakeClock } from '../fake-clock'
 import { addCast, demoSignIns } from './cast'
 import type { DemoCast, DemoSignIn } from './cast'
 import { tellEarth } from './earth'
+import { tellHazel3Ac } from './hazel-3-ac'
+import { tellIlmenau4 } from './ilmenau-4'
 import { tellLinden12 } from './linden-12'
 import { tellHazel3, tellLinden7 } from './waiting-pairs'
 
@@ -21,6 +23,8 @@ export interface Demo {
   cast: DemoCast
   linden12: TargetView
   earth: TargetView
+  ilmenau4: TargetView
+  hazel3Ac: TargetView
   linden7: TargetView
   hazel3: TargetView
 }
@@ -36,7 +40,9 @@ export async function fillDemo({ house, passwords }: { house: DemoHouse, passwor
   const cast = await addCast(house, signIns)
   const earth = await tellEarth(cast, house.clock)
   const linden12 = await tellLinden12(cast, house.clock)
+  const ilmenau4 = await tellIlmenau4(cast, house.clock)
+  const hazel3Ac = await tellHazel3Ac(cast, house.clock)
   const linden7 = await tellLinden7(cast, house.clock)
   const hazel3 = await tellHazel3(cast, house.clock)
-  return { signIns, cast, linden12, earth, linden7, hazel3 }
+  return { signIns, cast, linden12, earth, ilmenau4, hazel3Ac, linden7, hazel3 }
 }

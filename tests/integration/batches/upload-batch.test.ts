@@ -101,12 +101,6 @@ describe('an upload that cannot be used writes nothing', () => {
     expect(await countRows(house)).toEqual(before)
   })
 
-  it('a kind that is coming with the next engine', async () => {
-    const before = await countRows(house)
-    await expect(upload('time_utc,ra_deg,dec_deg\n', { kind: 'equatorial', targetId: null })).rejects.toMatchObject({ code: 'kind-not-available', detail: expect.stringMatching(/coming with the engine/) as string })
-    expect(await countRows(house)).toEqual(before)
-  })
-
   it('a target that is not there, or of another kind', async () => {
     const before = await countRows(house)
     await expect(upload(FILE, { targetId: 'a'.repeat(26) })).rejects.toMatchObject({ code: 'input-invalid', fields: [{ path: 'targetId' }] })

@@ -96,7 +96,7 @@ describe('a file over HTTP', () => {
   it.each([
     ['empty', '', {}, 422, 'file-unreadable'],
     ['holding column names only', 'epoch,theta_deg,rho_arcsec\n', {}, 422, 'file-unreadable'],
-    ['of a kind that is still to come', FILE, { kind: 'equatorial' }, 422, 'kind-not-available'],
+    ['of another kind than its target', FILE, { kind: 'equatorial' }, 422, 'input-invalid'],
     ['of a kind that nobody knows', FILE, { kind: 'square' }, 422, 'input-invalid'],
     ['without a name', FILE, { fileName: ' ' }, 422, 'input-invalid'],
     ['for no target here', FILE, { targetId: 'a'.repeat(26) }, 422, 'input-invalid'],

@@ -65,6 +65,18 @@ describe('npm run fit', () => {
     expect(predict(result!, [0])[0]!.values.r).toBeGreaterThan(1.3)
   })
 
+  it('knows places of comets and minor planets by their columns', () => {
+    const text = readFileSync(join(CHECKS, 'astrometry_12893_1998.csv'), 'utf8').replace('date_utc', 'time_utc')
+    const { status, result } = fit(write('planet.csv', text), '--settings', write('sun.json', '{"forces":"sun"}'))
+    expect(status).toBe(0)
+    expect(result).toMatchObject({ kind: 'equatorial', honestArc: { standing: 'strained' }, statistics: { used: 24 } })
+    // An independent two-body solution of the same positions: a 2.828823 au, e 0.069146, i 2.324001°.
+    const off = (name: string, expected: number) => Math.abs(result!.elements[name]!.value - expected)
+    expect(off('semiMajorAxis', 2.828823)).toBeLessThan(1e-5)
+    expect(off('eccentricity', 0.069146)).toBeLessThan(1.5e-5)
+    expect(off('inclination', 2.324001)).toBeLessThan(3e-5)
+  })
+
   it('takes one target of several by name, and asks for it where none was named', () => {
     const rows = s2InArcsec().split('\n')
     const named = [`target,components,${rows[0]}`, ...rows.slice(1).map(row => `Linden 12,AB,${row}`), ...rows.slice(1, 9).map(row => `Linden 12,AC,${row}`), 'Hazel 3,,2026.1,0.1,,0.1,x'].join('\n')
@@ -100,7 +112,7 @@ describe('npm run fit refuses with exit code 2 and problems as JSON', () => {
     ['an empty file', () => [write('empty.csv', '')], 'empty'],
     ['a binary file', () => [write('zip.csv', Uint8Array.from([0x50, 0x4B, 3, 4, 0, 0]))], 'spreadsheet'],
     ['a file with one bad cell', () => [write('bad.csv', 'epoch,theta_deg,rho_arcsec\n2026.1,10,1\n2026.9,361,1\n')], '0 to 360'],
-    ['equatorial measures', () => [write('comet.csv', 'time_utc,ra_deg,dec_deg,station\n2026-11-28T21:30Z,1,2,691\n')], 'coming with the engine'],
+    ['places from a station that nobody knows', () => [write('comet.csv', 'time_utc,ra_deg,dec_deg,station\n2026-11-28T21:30Z,1,2,hill\n')], 'not a station whose place is known'],
     ['an unknown kind', () => [write('k.csv', 'epoch'), '--kind', 'spectroscopic'], 'no kind of measure'],
     ['an unknown option', () => [write('o.csv', 'epoch'), '--fast'], '--fast'],
     ['settings that are no JSON', () => [write('s.csv', s2InArcsec()), '--settings', write('broken.json', '{')], 'settings'],

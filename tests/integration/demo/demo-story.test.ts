@@ -3,11 +3,14 @@ import { signIn } from '../../../server/services/people/sign-in'
 import { listDesk } from '../../../server/services/desk/list-desk'
 import { listEditions } from '../../../server/services/editions/list-editions'
 import { readEdition } from '../../../server/services/editions/read-edition'
+import { readFit } from '../../../server/services/fits/read-fit'
 import { readTarget } from '../../../server/services/targets/read-target'
 import { CAST_NAMES } from '../../builders/demo/cast'
 import { fillDemo } from '../../builders/demo/demo-story'
 import type { Demo } from '../../builders/demo/demo-story'
 import { TRUE_EARTH } from '../../builders/demo/earth'
+import { TRUE_HAZEL_3_AC } from '../../builders/demo/hazel-3-ac'
+import { TRUE_ILMENAU_4 } from '../../builders/demo/ilmenau-4'
 import { TRUE_LINDEN_12 } from '../../builders/demo/linden-12'
 import { renewPasswords } from '../../builders/demo/renew-passwords'
 import { createTestHouse } from '../../builders/test-house'
@@ -29,9 +32,9 @@ const within = (element: { value: number, sigma: number | null }, truth: number,
 }
 
 describe('the demo', () => {
-  it('publishes the pair twice and the body in the plane once, and lists both', async () => {
+  it('publishes the pair twice, and once each the straight pair, the comet and the body in the plane', async () => {
     const { items } = await listEditions(house.ctx, {})
-    expect(items.map(item => [item.targetName, item.number])).toEqual([['Linden 12 AB', 2], ['Earth about the Sun', 1]])
+    expect(items.map(item => [item.targetName, item.number])).toEqual([['Linden 12 AB', 2], ['Hazel 3 AC', 1], ['Comet Ilmenau 4', 1], ['Earth about the Sun', 1]])
     expect(await readEdition(house.ctx, demo.linden12.id, 1)).toMatchObject({ state: 'superseded', supersededBy: 2 })
   })
 
@@ -57,9 +60,30 @@ describe('the demo', () => {
     expect(snapshot.predictions).toHaveLength(36)
   })
 
-  it('leaves one fit waiting that the rules will not let be published, and one that could not be made', async () => {
+  it('finds the true orbit of the comet within its errors, unsettled whether it is bound, and two weeks later with the planets', async () => {
+    const { elements, snapshot, summary } = await readEdition(house.ctx, demo.ilmenau4.id, 1)
+    within(elements.perihelionDistance!, TRUE_ILMENAU_4.perihelionDistanceAu)
+    within(elements.eccentricity!, TRUE_ILMENAU_4.eccentricity)
+    within(elements.inclination!, TRUE_ILMENAU_4.inclinationDeg)
+    within(elements.perihelionTime!, TRUE_ILMENAU_4.perihelionTimeJdTt)
+    expect(summary).toMatch(/parabola not excluded; honest over its 27-day arc$/)
+    expect(snapshot.measures).toHaveLength(39)
+    const { fit } = await readTarget(demo.cast.people.mirelle.ctx, demo.ilmenau4.id, null)
+    expect(fit).toMatchObject({ state: 'done', unmetRules: [], result: { honestArc: { standing: 'perturbed' } } })
+  })
+
+  it('warns that the motion of the wide pair is straight and publishes the line', async () => {
+    const { fits } = await readTarget(demo.cast.people.mirelle.ctx, demo.hazel3Ac.id, null)
+    const orbit = await readFit(demo.cast.people.mirelle.ctx, fits.find(fit => fit.number === 2)!.id)
+    expect(orbit.result?.warnings.join(' ')).toContain('The motion so far is straight')
+    const { summary, elements } = await readEdition(house.ctx, demo.hazel3Ac.id, 1)
+    expect(summary).toBe('Motion so far straight')
+    within(elements.motion!, Math.hypot(TRUE_HAZEL_3_AC.eastArcsecPerYr, TRUE_HAZEL_3_AC.northArcsecPerYr))
+  })
+
+  it('leaves two fits waiting, one of which the rules will not let be published, and one that could not be made', async () => {
     const waiting = await listDesk(demo.cast.people.mirelle.ctx)
-    expect(waiting.map(item => [item.targetName, item.fit.state])).toEqual([['Linden 7 AB', 'done'], ['Hazel 3 AB', 'failed']])
+    expect(waiting.map(item => [item.targetName, item.fit.state])).toEqual([['Comet Ilmenau 4', 'done'], ['Linden 7 AB', 'done'], ['Hazel 3 AB', 'failed']])
     const { fit } = await readTarget(demo.cast.people.mirelle.ctx, demo.linden7.id, null)
     expect(fit?.unmetRules.join(' ')).toContain('0.3 of a turn')
   })

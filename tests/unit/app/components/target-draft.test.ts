@@ -16,6 +16,12 @@ describe('a new target as typed', () => {
     expect(createTargetSchema.parse(body)).toMatchObject({ diameterScaleArcmin: 31.99, caution: 'sun', radiusUnit: 'au' })
   })
 
+  it('a comet is sent by its name alone', () => {
+    const body = targetBody({ ...blankTarget(programmeId), kind: 'equatorial', name: 'Comet Ilmenau 4', componentA: 'A', radiusUnit: 'au', isSun: true })
+    expect(createTargetSchema.parse(body)).toMatchObject({ kind: 'equatorial', name: 'Comet Ilmenau 4', caution: 'none' })
+    expect(body).not.toHaveProperty('componentA')
+  })
+
   it('a scale that is no number is refused by the schema rather than dropped', () => {
     const body = targetBody({ ...blankTarget(programmeId), kind: 'plane', name: 'Earth', diameterScaleArcmin: 'about 32' })
     expect(createTargetSchema.safeParse(body).success).toBe(false)

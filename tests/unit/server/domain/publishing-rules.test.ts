@@ -3,7 +3,7 @@ import { publishingCase, unmetRules } from '../../../../server/domain/publishing
 import { pairResult, planeResult, solarResult } from '../../../builders/fit-result'
 
 const RULES = { leastMeasures: 8, leastObservers: 2, leastArcTurns: 0.5, needsSecondConsent: true }
-const MET = { measuresUsed: 8, observersUsed: 2, arcTurns: 0.5, hindrances: [], consents: 1 }
+const MET = { measuresUsed: 8, observersUsed: 2, isOrbit: true, arcTurns: 0.5, hindrances: [], consents: 1 }
 
 describe("the programme's rules for publishing", () => {
   it('are met at their very limits', () => {
@@ -26,10 +26,14 @@ describe("the programme's rules for publishing", () => {
     expect(unmetRules({ ...RULES, leastArcTurns: 0 }, { ...MET, arcTurns: null })).toEqual([])
   })
 
+  it('ask for no part of a turn of a motion that is straight', () => {
+    expect(unmetRules(RULES, { ...publishingCase(pairResult({}, { model: 'line' }), 1), measuresUsed: 8, observersUsed: 2 })).toEqual([])
+  })
+
   it('count what is used, and take the directions covered as the arc where there are no times', () => {
     const pair = pairResult()
     pair.statistics = { ...pair.statistics, used: 19, arc: { ...pair.statistics.arc, turns: 0.8 }, byObserver: [{ observer: 'T. Orrowin', measures: 19, rms: {}, bias: {} }, { observer: 'R. Quellmann', measures: 0, rms: {}, bias: {} }] }
-    expect(publishingCase(pair, 0)).toEqual({ measuresUsed: 19, observersUsed: 1, arcTurns: 0.8, hindrances: [], consents: 0 })
+    expect(publishingCase(pair, 0)).toEqual({ measuresUsed: 19, observersUsed: 1, isOrbit: true, arcTurns: 0.8, hindrances: [], consents: 0 })
     const plane = planeResult()
     plane.statistics = { ...plane.statistics, arc: { ...plane.statistics.arc, trueAnomalyCoveredDeg: 270 } }
     expect(publishingCase(plane, 0).arcTurns).toBe(0.75)
