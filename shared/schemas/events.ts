@@ -23,5 +23,7 @@ export interface AuditEventView {
   event: string
   subjectKind: string
   subjectId: string
+  /** The target, person or programme it was about; null for what has no name, such as a letter. */
+  subjectName: string | null
   detail: Record<string, unknown>
 }

@@ -21,6 +21,7 @@ export async function listAuditEvents(ctx: Context, { cursor, limit = DEFAULT_LI
       event: row.event,
       subjectKind: row.subject_kind,
       subjectId: row.subject_id,
+      subjectName: row.subject_name,
       detail: JSON.parse(row.detail) as Record<string, unknown>,
     }),
   })

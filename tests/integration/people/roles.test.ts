@@ -7,6 +7,7 @@ import { listProgrammes } from '../../../server/services/programmes/list-program
 import { createProgrammeSchema } from '../../../shared/schemas/targets'
 import { addFirstAdministrator, addPerson, addProgramme } from '../../builders/people'
 import type { AddedPerson } from '../../builders/people'
+import { addTarget } from '../../builders/work'
 import { createTestHouse } from '../../builders/test-house'
 import type { TestHouse } from '../../builders/test-house'
 
@@ -29,7 +30,16 @@ test('an administrator sets all roles of a person, and the change is recorded', 
   expect(changed).toMatchObject({ isObserver: true, isAdministrator: false, coordinatorOf: [sun.id] })
   expect((await house.actAs(observer)).actor).toMatchObject({ isObserver: true, coordinatorOf: [sun.id] })
   const [newest] = (await listAuditEvents(keeper.ctx, {})).items
-  expect(newest).toMatchObject({ event: 'roles.changed', actorName: 'Ilka Soundraven', subjectId: observer.id, detail: { isObserver: true, isAdministrator: false, coordinatorOf: [sun.id] } })
+  expect(newest).toMatchObject({ event: 'roles.changed', actorName: 'Ilka Soundraven', subjectId: observer.id, subjectName: 'T. Orrowin', detail: { isObserver: true, isAdministrator: false, coordinatorOf: [sun.id] } })
+})
+
+test('the record names the target, person or programme that an event is about', async () => {
+  const pairs = await addProgramme(house, { name: 'Wide pairs' })
+  const coordinator = await addPerson(house, { displayName: 'Mirelle Tasque', coordinatorOf: [pairs.id] })
+  await addTarget(coordinator.ctx, { kind: 'relative', programmeId: pairs.id, name: 'Linden 12 AB' })
+  const { items } = await listAuditEvents(keeper.ctx, {})
+  const nameOf = (event: string) => items.find(item => item.event === event)?.subjectName
+  expect([nameOf('target.created'), nameOf('roles.changed'), nameOf('programme.created')]).toEqual(['Linden 12 AB', 'Mirelle Tasque', 'Wide pairs'])
 })
 
 test('nobody else sets roles, not even their own, and nothing is written', async () => {
