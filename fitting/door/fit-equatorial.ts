@@ -1,6 +1,6 @@
 /** The orbit of a comet or minor planet from request to result: observers, search or refit, solution, judgement. */
 import { lengthOf } from '../conic/state'
-import { earthHeliocentric, SUN_GRAVITATION_AU3_PER_D2 as MU, SUN_OVER_PLANET_MASS } from '../earth'
+import { SUN_GRAVITATION_AU3_PER_D2 as MU, SUN_OVER_PLANET_MASS } from '../earth'
 import { orbitOfState, stateOfValues, type Forces } from '../models/equatorial-orbit'
 import { emptyLineOfSight, lineOfSightInto, roughLightTime } from '../models/sight-rows'
 import { prepareSightings, rescaleSightings, whiten, type Sightings } from '../models/sighting'
@@ -58,11 +58,9 @@ function whitenByMotion({ orbit, solution }: SettledSights, { all }: Sightings):
   const state = stateOfValues(orbit, solution.values)
   orbit.motion.begin(state, false)
   const found = emptyLineOfSight()
-  const earth = new Float64Array(6)
   for (const sighting of all) {
     if (!(sighting.sigmaTimeS > 0) || !lineOfSightInto(sighting, orbit.motion, roughLightTime(sighting, state), found, false)) continue
-    earthHeliocentric(sighting.jdTt, earth)
-    whiten(sighting, skyMotionOf(sighting, found, earth.subarray(3)))
+    whiten(sighting, skyMotionOf(sighting, found, orbit.reference))
   }
 }
 
