@@ -1,9 +1,11 @@
 /** From the solutions of an equatorial fit to its result: elements, errors, residuals, alternatives, honest arc, warnings. */
+import { acos } from '../elementary'
 import type { Forces } from '../models/equatorial-orbit'
 import type { Sightings } from '../models/sighting'
 import type { SettledSights } from '../search/settle-sights'
 import { covarianceOf } from '../solve/covariance'
-import type { Alternative, Element, FitResult, FitSettings, FitStatistics } from '../types'
+import type { Alternative, Element, FitResult, FitSettings, FitStatistics, Residual } from '../types'
+import { absoluteMagnitude, type MeasuredBrightness } from '../uncertainty/brightness'
 import { equatorialElements, PERIHELION_NAMES, type EquatorialElements } from '../uncertainty/equatorial-elements'
 import { equatorialArc, equatorialConic, equatorialConstants, type MotionFindings } from '../uncertainty/equatorial-motion'
 import { equatorialWarnings } from '../uncertainty/equatorial-warnings'
@@ -100,6 +102,17 @@ function statisticsOf(best: Judged, { sightings }: EquatorialJudgement, findings
   }
 }
 
+/** Magnitudes of the used measures with the distances of the orbit. */
+function brightnessOf({ all }: Sightings, residuals: readonly Residual[]): MeasuredBrightness[] {
+  return all.flatMap(({ magnitude, band, status, observer }, i) => {
+    const { distanceAu, sunDistanceAu } = residuals[i]!.computed
+    if (magnitude === null || status !== 'used' || distanceAu === undefined || sunDistanceAu === undefined) return []
+    const toSun = Math.sqrt(observer[0]! * observer[0]! + observer[1]! * observer[1]! + observer[2]! * observer[2]!)
+    const cosine = (distanceAu * distanceAu + sunDistanceAu * sunDistanceAu - toSun * toSun) / (2 * distanceAu * sunDistanceAu)
+    return [{ magnitude, band, distanceAu, sunDistanceAu, phaseRad: acos(Math.max(-1, Math.min(1, cosine))) }]
+  })
+}
+
 /**
  * Judges an equatorial fit.
  * @param judgement solutions best first, measures with their errors, forces, arc.
@@ -120,6 +133,8 @@ export function judgeEquatorial(judgement: EquatorialJudgement): FitResult {
   const scaleSquared = Math.max(1, partial.reducedChiSquare ?? 1)
   const conic = equatorialConic(findings, { chiSquare: solution.chiSquare, parabolaChiSquare: parabolaOf(judgement, best), scaleSquared: sightings.basis === 'formal' ? 1 : scaleSquared })
   const elements = publishedElements(best)
+  const brightness = absoluteMagnitude(brightnessOf(sightings, residuals), best.elements.at.eccentricity)
+  if (brightness !== null) elements[brightness.name] = brightness.element
   const beside = standBeside(judgement, scaleSquared)
   const alternatives = beside.map((other): Alternative => ({
     deltaChiSquare: Math.max(0, (other.solution.chiSquare - solution.chiSquare) / scaleSquared), elements: publishedElements(judged(other, sightings)),
