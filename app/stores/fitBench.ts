@@ -1,15 +1,11 @@
 import { defineStore } from 'pinia'
 import { ref } from 'vue'
-import type { Element } from '~~/fitting/types'
 import type { FitView } from '#shared/schemas/fits'
+import { usedIdsOf } from '~/components/fit/change-of-refit'
+import type { Before } from '~/components/fit/change-of-refit'
 
 /** A coordinator's change to a fit that has not been refitted yet. */
 export type PendingChange = { kind: 'set-aside'; reason: string } | { kind: 'take-back' }
-
-interface Before {
-  number: number
-  elements: Record<string, Element>
-}
 
 /** What a coordinator is trying on fits: changes chosen but not refitted, reasons typed but not sent, and what a refit started from. */
 export const useFitBench = defineStore('fitBench', () => {
@@ -43,7 +39,7 @@ export const useFitBench = defineStore('fitBench', () => {
   }
 
   function rememberBefore(newFitId: string, fit: FitView) {
-    if (fit.result) beforeByFit.value[newFitId] = { number: fit.number, elements: fit.result.elements }
+    if (fit.result) beforeByFit.value[newFitId] = { number: fit.number, elements: fit.result.elements, usedIds: usedIdsOf(fit.result) }
   }
 
   return { changes, reasons, beforeByFit, changesOf, change, undo, dropAll, setAsideList, rememberBefore }

@@ -36,6 +36,6 @@ describe('the bench of a fit', () => {
   it('remembers what a refit started from, for comparing', () => {
     const bench = useFitBench()
     bench.rememberBefore('new fit', fit)
-    expect(bench.beforeByFit['new fit']).toEqual({ number: 7, elements: pairResult().elements })
+    expect(bench.beforeByFit['new fit']).toEqual({ number: 7, elements: pairResult().elements, usedIds: [] })
   })
 })
