@@ -14,6 +14,8 @@ import { emptyLineOfSight, lineOfSightInto, roughLightTime, sunMotion, type Sigh
 import { joinInto } from './lambert'
 
 const STEPS = 24
+/** With one measure between the ends every exact orbit is wanted, however narrow its valley. */
+const STEPS_FOR_THREE = 60
 const NEAREST_AU = 0.003
 const FARTHEST_AU = 60
 /** V, au/d: 104 km/s. */
@@ -54,15 +56,15 @@ function placeAt(sight: Sight, distance: number, out: Float64Array): void {
   for (let k = 0; k < 3; k++) out[k] = sight.observer[k]! + sight.sunVelocity[k]! * tau + distance * sight.axes[k]!
 }
 
-function firstDistance(i: number): number {
-  return NEAREST_AU * exp((i * log(FARTHEST_AU / NEAREST_AU)) / (STEPS - 1))
+function firstDistance(i: number, steps: number): number {
+  return NEAREST_AU * exp((i * log(FARTHEST_AU / NEAREST_AU)) / (steps - 1))
 }
 
-function lastDistance(rho: number, j: number, days: number): number {
+function lastDistance(rho: number, part: number, days: number): number {
   const reach = LARGEST_RATE_AU_PER_D * days
   const low = Math.max(NEAREST_AU, rho - reach)
   const high = Math.min(FARTHEST_AU, rho + reach)
-  return reach > 0.5 * rho ? low * exp((j * log(high / low)) / (STEPS - 1)) : low + ((high - low) * j) / (STEPS - 1)
+  return reach > 0.5 * rho ? low * exp(part * log(high / low)) : low + (high - low) * part
 }
 
 const from = new Float64Array(3)
@@ -86,14 +88,14 @@ function candidateAt(ends: readonly [Sight, Sight], distances: readonly [number,
 }
 
 /** Local minima of a square table among their eight neighbours. */
-function minimaOf(table: readonly Candidate[]): Candidate[] {
+function minimaOf(table: readonly Candidate[], steps: number): Candidate[] {
   return table.filter((candidate, at) => {
     if (!(candidate.chiSquare < Infinity)) return false
-    const [i, j] = [Math.floor(at / STEPS), at % STEPS]
+    const [i, j] = [Math.floor(at / steps), at % steps]
     for (let di = -1; di <= 1; di++) {
       for (let dj = -1; dj <= 1; dj++) {
         const [k, l] = [i + di, j + dj]
-        if (k >= 0 && l >= 0 && k < STEPS && l < STEPS && table[k * STEPS + l]!.chiSquare < candidate.chiSquare) return false
+        if (k >= 0 && l >= 0 && k < steps && l < steps && table[k * steps + l]!.chiSquare < candidate.chiSquare) return false
       }
     }
     return true
@@ -111,14 +113,15 @@ export function searchEndDistances(sights: readonly Sight[], most: number): Cand
   const ends = [sights[0]!, sights[sights.length - 1]!] as const
   const between = sights.slice(1, -1)
   const days = ends[1].jdTt - ends[0].jdTt
+  const steps = between.length === 1 ? STEPS_FOR_THREE : STEPS
   const found: Candidate[] = []
   for (const isLongWay of [false, true]) {
     const table: Candidate[] = []
-    for (let i = 0; i < STEPS; i++) {
-      const rho = firstDistance(i)
-      for (let j = 0; j < STEPS; j++) table.push(candidateAt(ends, [rho, lastDistance(rho, j, days)], isLongWay, between))
+    for (let i = 0; i < steps; i++) {
+      const rho = firstDistance(i, steps)
+      for (let j = 0; j < steps; j++) table.push(candidateAt(ends, [rho, lastDistance(rho, j / (steps - 1), days)], isLongWay, between))
     }
-    found.push(...minimaOf(table))
+    found.push(...minimaOf(table, steps))
   }
   return found.sort((a, b) => a.chiSquare - b.chiSquare).slice(0, most)
 }

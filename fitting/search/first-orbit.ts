@@ -19,6 +19,7 @@ import { refinedAngleOrbit, roughAngleOrbits, type Direction } from './gauss-ang
 
 const THINNED_TO = 14
 const GRID_CANDIDATES = 14
+const GRID_CANDIDATES_FOR_THREE = 40
 /** Steps of the first polish, and how many of its results are followed to the end. */
 const FIRST_POLISH = 30
 const FOLLOWED = 5
@@ -113,7 +114,7 @@ export function settleDistinct(problem: ReturnType<typeof sightProblem>, starts:
 export function searchFirstOrbits(sights: readonly Sight[], reference: SightReference, onProgress: (part: number) => void = () => {}): Solution[] {
   const few = thinned(sights, THINNED_TO)
   const epoch = reference.jdTt
-  const grid = searchEndDistances(few, GRID_CANDIDATES).map((candidate) => stateAt(candidate.state, candidate.jdTt, epoch)).filter((state) => state !== null)
+  const grid = searchEndDistances(few, few.length === 3 ? GRID_CANDIDATES_FOR_THREE : GRID_CANDIDATES).map((candidate) => stateAt(candidate.state, candidate.jdTt, epoch)).filter((state) => state !== null)
   onProgress(0.4)
   const states = [...statesByGauss(few, epoch), ...grid]
   const starts = states.map((state) => sightOfState(reference, state)).filter((values) => values.every((value) => value - value === 0))
