@@ -8,11 +8,11 @@
  * Source: night weights: Carpino, Milani & Chesley 2003, Icarus 166, 248 (practice, from memory); Cholesky whitening: Golub & Van Loan 1996.
  */
 import type { Vector } from '../conic/state'
-import { observerHeliocentric } from '../earth'
 import { cos, DEG, sin } from '../elementary'
 import { median } from '../solve/median'
 import { julianEpochFromJd } from '../time'
 import type { EquatorialMeasure, FitSettings, FitStatistics } from '../types'
+import { knownObserver } from './known-observers'
 import type { Sight } from './sight-rows'
 import { compareMeasures } from './sky-measure'
 
@@ -108,7 +108,7 @@ function nightWeights(used: readonly EquatorialMeasure[]): Map<string, number> {
 }
 
 function sightingOf(measure: EquatorialMeasure, errors: { east: number; north: number; correlation: number }, nightWeight: number): Sighting {
-  const { jdTt, place, sunVelocity } = observerHeliocentric(measure.site, measure.jdUtc)
+  const { jdTt, place, sunVelocity } = knownObserver(measure.site, measure.jdUtc)
   const sighting: Sighting = {
     id: measure.id, credit: measure.observer, status: measure.setAside === true ? 'set-aside' : 'used',
     jdUtc: measure.jdUtc, jdTt, epochYr: julianEpochFromJd(jdTt), raRad: measure.raRad, decRad: measure.decRad,
