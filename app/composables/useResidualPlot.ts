@@ -109,7 +109,7 @@ function layoutOf({ chart, nowYr, widthPx }: ResidualPlotInput, colours: PlotCol
     ...signedTicks(series), zeroline: true, zerolinecolor: colours.orbit, zerolinewidth: 1.4, ticks: '',
   }]))
   return {
-    paper_bgcolor: colours.sheet, plot_bgcolor: colours.sheet, showlegend: false, autosize: true, uirevision: 'kept',
+    paper_bgcolor: colours.sheet, plot_bgcolor: colours.sheet, showlegend: false, autosize: true, uirevision: 'kept', separators: '.',
     font: { family: '"Nunito Sans Variable", sans-serif', size: 12, color: colours.ink2 },
     margin: { l: 54, r: 16, t: 26, b: 30 }, hovermode: 'closest',
     hoverlabel: { bgcolor: colours.sheet, bordercolor: colours.ink2, font: { color: colours.ink } },
