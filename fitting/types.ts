@@ -105,11 +105,14 @@ export interface FitSettings {
   model?: Model
   loss?: 'squares' | 'huber' | 'biweight'
   weights?: 'stated' | 'equal' | 'by-observer'
+  /** Elements by name at the value they are held at, in the unit in which they are published. */
   hold?: Record<string, number>
   conicClass?: 'any' | 'ellipse' | 'parabola' | 'circle'
   forces?: 'sun' | 'planets'
   normalPoints?: boolean
   thetaEquinox?: number
+  /** Relative: what the reference point of the measures may do against the focus; default 'none'. */
+  frameOffset?: 'none' | 'offset' | 'offset-and-drift'
   shortestPeriodYr?: number
   sigmaScale?: number
   /** Plane: the diameter, arcmin, that the body shows at r = 1 unit. */
@@ -161,6 +164,8 @@ export interface Element {
   sigmaFormal: number | null
   sigmaScaled: number | null
   unit: string
+  /** Held at this value by the request: its errors are 0, and those of the others are conditional on it. */
+  status?: 'held'
 }
 
 export const CONIC_CLASSES = ['circle', 'ellipse', 'parabola', 'hyperbola'] as const
@@ -190,9 +195,9 @@ export interface Constants {
 export interface Residual {
   id: string
   status: 'used' | 'set-aside' | 'not-fitted'
-  /** By coordinate; the keys of the kind: thetaDeg, rhoArcsec, eastArcsec, northArcsec | r, diameterArcmin | raDeg, decDeg, distanceAu, sunDistanceAu. */
+  /** By coordinate; the keys of the kind: thetaDeg, rhoArcsec, eastArcsec, northArcsec | r, diameterArcmin, with times phiDeg | raDeg, decDeg, distanceAu, sunDistanceAu. */
   computed: Record<string, number>
-  /** Observed minus computed; null for a coordinate that was not measured. relative adds acrossArcsec (ρΔθ) and alongArcsec (Δρ);
+  /** Observed minus computed; null for a coordinate that was not measured. relative adds acrossArcsec (ρΔθ) and alongArcsec (Δρ); plane with times adds across, in the unit of r;
    *  equatorial has raCosDecArcsec and decArcsec, and the same along and across the motion on the sky. */
   observedMinusComputed: Record<string, number | null>
   /** Whitened length √Σr² in σ, and the whitened rows themselves. */
@@ -224,7 +229,7 @@ export interface FitState {
   values: number[]
   /** Covariance of values with the errors to publish; null where the problem is singular or exact. */
   covariance: number[][] | null
-  /** Reference epoch, Julian year (relative); 0 otherwise. */
+  /** Reference epoch, Julian year (relative, plane with times); 0 otherwise. */
   referenceEpochYr: number
   /** Equatorial: what the parameters are counted from; plain numbers. */
   reference?: SightReference
@@ -284,6 +289,8 @@ export interface FitStatistics {
   estimatedSigma?: Record<string, { value: number; unit: string }>
   /** Weights 'by-observer': the errors of each observer and method. */
   observerErrors?: ObserverError[]
+  /** Plane with times: relative change of ½ r² φ̇ a year, which the law of areas has 0, with its published error. */
+  arealLaw?: { changePerYr: number; sigma: number }
   /** Parameters that the measures determine; below `parameters` the problem is singular. */
   rank?: number
   arc: {

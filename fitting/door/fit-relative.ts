@@ -1,7 +1,9 @@
 /** The relative orbit from request to result: errors, search or refit, solution, judgement. */
-import { keplerPath, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
+import { relativeForm, type RelativeForm } from '../models/relative-form'
+import { RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import { searchRelative, type SearchRequest } from '../search/blind-search'
+import { searchHeld } from '../search/held-search'
 import { searchRobustly } from '../search/robust-search'
 import { preferredSolution } from '../search/prefer-longer'
 import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
@@ -13,9 +15,9 @@ import { judgeRelative } from './judge-relative'
 import { settleByObserver } from './observer-errors'
 import type { Report } from './progress'
 import { refuse } from './refusal'
+import { heldOfRelative } from './validate-held'
 import { validateRelative } from './validate-measures'
 
-const LEAST_ROWS = 7
 const LEAST_EPOCHS = 4
 /** Epochs closer than this are one (3 s). */
 const SAME_EPOCH_YR = 1e-7
@@ -40,6 +42,7 @@ interface Middle {
 
 /** Epoch about which phases and motions are least correlated: the middle of the arc. */
 function middleOf(measures: SkyMeasures): Middle {
+  if (measures.used.length === 0) refuse('too-few-measures', 'Every measure is set aside or is a limit.', 'Use measures of at least four epochs.')
   const first = measures.used[0]!.epochYr
   const last = measures.used[measures.used.length - 1]!.epochYr
   return { referenceEpochYr: (first + last) / 2, spanYr: last - first }
@@ -50,14 +53,13 @@ function distinctEpochs(used: readonly SkyMeasure[]): number {
   return used.filter((measure, i) => i === 0 || measure.epochYr - used[i - 1]!.epochYr > SAME_EPOCH_YR).length
 }
 
-function checkEnough(measures: SkyMeasures): void {
+function checkEnough(measures: SkyMeasures, { path: { parameters } }: RelativeForm): void {
   const { used } = measures
   const rows = used.reduce((sum, measure) => sum + rowsOf(measure), 0)
   const epochs = distinctEpochs(used)
-  if (used.length === 0) refuse('too-few-measures', 'Every measure is set aside or is a limit.', 'Use measures of at least four epochs.')
   if (epochs === 1) refuse('one-epoch', 'All used measures are of one epoch: nothing shows the motion.', 'Add measures of other epochs.')
-  if (rows < LEAST_ROWS || epochs < LEAST_EPOCHS) {
-    refuse('too-few-measures', `An orbit has 7 unknowns; ${rows} coordinates of ${epochs} epochs are used.`, 'Use at least four measures of θ and ρ at four epochs, or fit a straight line.')
+  if (rows < parameters || epochs < Math.min(LEAST_EPOCHS, Math.floor((parameters + 2) / 2))) {
+    refuse('too-few-measures', `An orbit has ${parameters} unknowns; ${rows} coordinates of ${epochs} epochs are used.`, 'Use at least four measures of θ and ρ at four epochs, or fit a straight line.')
   }
   if (!used.some((measure) => measure.rhoArcsec >= SMALLEST_RHO_ARCSEC)) refuse('too-few-measures', 'No used measure has a separation: the size of the orbit is open.', 'Add at least one separation.')
   if (!used.some((measure) => measure.form !== 'rho')) refuse('too-few-measures', 'No used measure has a position angle: the orientation of the orbit is open.', 'Add position angles.')
@@ -73,31 +75,38 @@ function searchRequest(request: RelativeRequest, measures: SkyMeasures, middle: 
   }
 }
 
-function startsOf(request: RelativeRequest, measures: SkyMeasures, middle: Middle): ArrayLike<number>[] {
+const isRobust = ({ settings }: RelativeRequest) => settings.loss === 'biweight' || settings.loss === 'huber'
+
+/** Regular orbits to start from. */
+function regularStarts(request: RelativeRequest, measures: SkyMeasures, middle: Middle, { held }: RelativeForm): ArrayLike<number>[] {
   if (request.start) return [request.start.state.values]
   const search = searchRequest(request, measures, middle)
-  const minima = isRobust(request) ? searchRobustly(search, request.settings.seed ?? 1) : searchRelative(search)
+  if (held.period !== undefined || held.eccentricity !== undefined || held.periastronTime !== undefined) return searchHeld(search, held)
+  const minima = request.settings.loss === 'biweight' ? searchRobustly(search, request.settings.seed ?? 1) : searchRelative(search)
   return minima.slice(0, ALTERNATIVES_AT_MOST + 1).map((minimum) => minimum.values)
 }
 
-const isRobust = (request: RelativeRequest) => request.settings.loss === 'biweight'
-
 /** Solutions of all starts, the one to publish first, with the weights of a robust loss in the measures. */
-function settleAll(request: RelativeRequest, measures: SkyMeasures, starts: ArrayLike<number>[], referenceEpochYr: number): RobustlySettled {
-  const path = keplerPath(referenceEpochYr)
-  const settled = isRobust(request) && starts.length > 0 ? settleRobustly(path, measures, starts)
-    : { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
+function settleAll(request: RelativeRequest, form: RelativeForm, measures: SkyMeasures, starts: ArrayLike<number>[]): RobustlySettled {
+  const { path, isRegular } = form
+  const { loss } = request.settings
+  let settled: RobustlySettled = { measures, solutions: [] }
+  if (loss === 'huber' || !isRobust(request)) settled = { measures, solutions: settleStarts(path, measures.used, starts, (part) => request.report('polishing', part)) }
+  if ((loss === 'huber' || loss === 'biweight') && starts.length > 0) {
+    const best = settled.solutions.length > 0 ? settled.solutions.map(({ solution }) => solution.values) : starts
+    settled = settleRobustly(path, measures, best, { loss, canTurn: loss === 'biweight' && isRegular })
+  }
   const best = settled.solutions[0]
-  if (best === undefined) return settled
-  const preferred = preferredSolution(settled.solutions, effectiveRows(settled.measures.used) - RELATIVE_KEPLER_NAMES.length)
+  if (best === undefined || !isRegular) return settled
+  const preferred = preferredSolution(settled.solutions, effectiveRows(settled.measures.used) - path.parameters)
   if (preferred === best) return settled
   const others = settled.solutions.filter((solution) => solution !== preferred)
   return { measures: settled.measures, solutions: [settlePath(path, settled.measures.used, preferred.solution.values), ...others] }
 }
 
 /** The fit with the errors that its residuals show, where errors come from them; else the fit as it is. */
-function withErrorsFromResiduals(request: RelativeRequest, provisional: RobustlySettled, referenceEpochYr: number): RobustlySettled & { observerErrors?: ObserverError[] } {
-  const again = (measures: SkyMeasures, before: readonly SettledPath[]) => settleAll(request, measures, before.map((settled) => settled.solution.values), referenceEpochYr)
+function withErrorsFromResiduals(request: RelativeRequest, form: RelativeForm, provisional: RobustlySettled): RobustlySettled & { observerErrors?: ObserverError[] } {
+  const again = (measures: SkyMeasures, before: readonly SettledPath[]) => settleAll(request, form, measures, before.map((settled) => settled.solution.values))
   if (request.settings.weights === 'by-observer') return settleByObserver(provisional, again)
   const estimated = withEstimatedErrors(provisional.measures, provisional.solutions[0]!)
   return estimated === provisional.measures ? provisional : again(estimated, provisional.solutions)
@@ -111,17 +120,19 @@ function withErrorsFromResiduals(request: RelativeRequest, provisional: Robustly
  */
 export function fitRelative(request: RelativeRequest): FitResult {
   validateRelative(request.measures)
+  const held = heldOfRelative(request.settings)
   const prepared = prepareSkyMeasures(request.measures, request.settings)
   request.report('reading', 1)
   if (request.settings.model === 'line' || request.settings.model === 'still') return fitMotion(request, prepared)
-  checkEnough(prepared)
   const middle = middleOf(prepared)
   const referenceEpochYr = request.start?.state.referenceEpochYr ?? middle.referenceEpochYr
-  const starts = startsOf(request, prepared, middle)
-  const provisional = settleAll(request, prepared, starts, referenceEpochYr)
+  const form = relativeForm(held, request.settings.frameOffset ?? 'none', referenceEpochYr)
+  checkEnough(prepared, form)
+  const starts = regularStarts(request, prepared, middle, form).flatMap((start) => form.starts(start))
+  const provisional = settleAll(request, form, prepared, starts)
   if (provisional.solutions.length === 0) refuse('no-orbit-found', 'The search found no orbit for these measures.', 'Look for changed quadrants and mistyped epochs, or fit a straight line.')
-  const { measures, solutions, observerErrors } = withErrorsFromResiduals(request, provisional, referenceEpochYr)
-  const result = judgeRelative({ solutions, measures, observerErrors, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
+  const { measures, solutions, observerErrors } = withErrorsFromResiduals(request, form, provisional)
+  const result = judgeRelative({ solutions, form, measures, observerErrors, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
   request.report('judging', 1)
   return result
 }

@@ -1,5 +1,7 @@
 /** From the solutions of a relative fit to its result: elements, errors, residuals, alternatives, warnings. */
-import { keplerPath, LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
+import type { Held } from '../models/held-orbit'
+import type { RelativeForm } from '../models/relative-form'
+import { LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { aboutNights } from '../models/nights'
 import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
@@ -7,6 +9,8 @@ import type { SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
 import type { Alternative, Element, FitResult, FitSettings, FitStatistics, ObserverError } from '../types'
 import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
+import { aboutFrame, frameElements, frameShift } from '../uncertainty/frame-elements'
+import { aboutHeld, markHeld, withHeldQuantities } from '../uncertainty/held-elements'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
 import { carryBackOf, combinedAngle, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
@@ -29,6 +33,7 @@ const SHORT_ARC_TURNS = 0.5
 export interface Judgement {
   /** Best first, at least one. */
   solutions: SettledPath[]
+  form: RelativeForm
   measures: SkyMeasures
   referenceEpochYr: number
   settings: FitSettings
@@ -42,18 +47,33 @@ export function publishedCovariance(matrix: number[][] | null, published: number
   return matrix === null || published === null ? null : matrix.map((row) => row.map((value) => value * published * published))
 }
 
-function errorsOf(settled: SettledPath, measures: SkyMeasures): Errors & { conditionNumber: number; rank: number } {
-  const { jacobian, residuals, values, chiSquare } = settled.solution
-  const { matrix, conditionNumber, rank } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
-  return { covariance: matrix, conditionNumber, rank, scale: errorScale(measures.basis, chiSquare, effectiveRows(measures.used) - values.length) }
+interface SolutionErrors extends Errors {
+  /** Covariance of the fitted parameters; that of the regular ones is `covariance`. */
+  fitted: number[][] | null
+  conditionNumber: number
+  rank: number
 }
 
-function publishedElements(elements: RelativeElements, errors: Errors): Record<string, Element> {
+function errorsOf(settled: SettledPath, { measures, form }: Judgement): SolutionErrors {
+  const { jacobian, residuals, values, chiSquare } = settled.solution
+  const { matrix, conditionNumber, rank } = covarianceOf({ rows: residuals.length, columns: values.length, jacobian, residuals })
+  return { covariance: form.regularCovariance(values, matrix), fitted: matrix, conditionNumber, rank, scale: errorScale(measures.basis, chiSquare, effectiveRows(measures.used) - values.length) }
+}
+
+/** Elements of a solution, those held with their values and without errors. */
+function elementsOf(settled: SettledPath, errors: Errors, judgement: Judgement): RelativeElements {
+  const { form, referenceEpochYr, measures: { used } } = judgement
+  const values = form.regular(settled.solution.values)
+  return withHeldQuantities(relativeElements({ values, covariance: errors.covariance, referenceEpochYr, lastEpochYr: used[used.length - 1]!.epochYr }), form.held)
+}
+
+function publishedElements(elements: RelativeElements, errors: Errors, held: Held): Record<string, Element> {
   const published: Record<string, Element> = {}
   for (const name of ELEMENT_NAMES) published[name] = elementOf(elements.quantities[name], errors.covariance, errors.scale)
   const combined = combinedAngle(elements, errors)
   if (combined !== null) published[combined.name] = combined.element
   published.nextPeriastronTime = elementOf(elements.nextPeriastron, errors.covariance, errors.scale)
+  markHeld(published, held)
   return published
 }
 
@@ -66,21 +86,21 @@ function elementCovariance(elements: RelativeElements, errors: Errors): FitResul
   return rows.every((row) => row.every((value) => value - value === 0)) ? { names: [...ELEMENT_NAMES], matrix: rows } : null
 }
 
-function alternativesOf(judgement: Judgement, scaleSquared: number, lastEpochYr: number): Alternative[] {
-  const { solutions, measures, referenceEpochYr, alternativeWithin } = judgement
+function alternativesOf(judgement: Judgement, scaleSquared: number): Alternative[] {
+  const { solutions, form, alternativeWithin } = judgement
   const best = solutions[0]!
   const kept: SettledPath[] = []
   for (const settled of solutions.slice(1)) {
-    const isNew = [best, ...kept].every((other) => !isSameMinimum(other.solution.values, settled.solution.values))
+    const isNew = [best, ...kept].every((other) => !isSameMinimum(form.regular(other.solution.values), form.regular(settled.solution.values)))
     const isMinimum = settled.solution.reason !== 'iteration-limit' && settled.solution.reason !== 'singular'
     if (isNew && isMinimum && settled.solution.chiSquare - best.solution.chiSquare < alternativeWithin * scaleSquared) kept.push(settled)
   }
   return kept.map((settled) => {
-    const errors = errorsOf(settled, measures)
-    const elements = relativeElements({ values: settled.solution.values, covariance: errors.covariance, referenceEpochYr, lastEpochYr })
+    const errors = errorsOf(settled, judgement)
+    const elements = elementsOf(settled, errors, judgement)
     return {
       deltaChiSquare: (settled.solution.chiSquare - best.solution.chiSquare) / scaleSquared,
-      elements: publishedElements(elements, errors),
+      elements: publishedElements(elements, errors, form.held),
     }
   })
 }
@@ -112,29 +132,34 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; r
  * @returns the result that leaves the door.
  */
 export function judgeRelative(judgement: Judgement): FitResult {
-  const { solutions, measures, referenceEpochYr, settings } = judgement
+  const { solutions, form, measures, referenceEpochYr, settings } = judgement
   const { solution, iterations } = solutions[0]!
   const { used } = measures
-  const lastEpochYr = used[used.length - 1]!.epochYr
-  const errors = errorsOf(solutions[0]!, measures)
-  const elements = relativeElements({ values: solution.values, covariance: errors.covariance, referenceEpochYr, lastEpochYr })
+  const errors = errorsOf(solutions[0]!, judgement)
+  const elements = elementsOf(solutions[0]!, errors, judgement)
+  const regular = form.regular(solution.values)
+  const frame = { frame: form.frame, frameFrom: form.frameFrom, fitted: solution.values, covariance: errors.fitted, scale: errors.scale }
   const partial = statisticsOf(judgement, errors, elements)
   const context: SkyResidualContext = {
-    path: keplerPath(referenceEpochYr), values: solution.values, covariance: errors.covariance,
+    path: form.path, values: solution.values, covariance: errors.fitted,
     scaleSquared: partial.reducedChiSquare, carryBack: carryBackOf(elements),
   }
-  const residuals = measures.all.map((measure) => skyResidual(measure, context))
+  const shiftAt = frameShift(frame, referenceEpochYr)
+  const residuals = measures.all.map((measure) => {
+    const shift = shiftAt(measure.epochYr)
+    return skyResidual(measure, { ...context, carryBack: (north, east) => context.carryBack(north - shift.north, east - shift.east) })
+  })
   const statistics: FitStatistics = {
     ...partial,
     rms: rmsByCoordinate(residuals, SKY_UNITS),
     byObserver: statisticsByObserver(residuals, measures.all.map((measure) => measure.observer), Object.keys(SKY_UNITS)),
   }
   const conic = relativeConic(elements, errors)
-  const published = publishedElements(elements, errors)
-  const alternatives = alternativesOf(judgement, Math.max(1, partial.reducedChiSquare ?? 1), lastEpochYr)
-  const isAtLimit = solution.values[1]! * solution.values[1]! + solution.values[2]! * solution.values[2]! > 0.95 * LARGEST_S * LARGEST_S
+  const published = { ...publishedElements(elements, errors, form.held), ...frameElements(frame) }
+  const alternatives = alternativesOf(judgement, Math.max(1, partial.reducedChiSquare ?? 1))
+  const isAtLimit = form.held.eccentricity === undefined && regular[1]! * regular[1]! + regular[2]! * regular[2]! > 0.95 * LARGEST_S * LARGEST_S
   const isShortArc = isAtLimit || (statistics.arc.turns ?? 0) < SHORT_ARC_TURNS
-  const straightness = isShortArc ? straightnessOf(measures, referenceEpochYr) : undefined
+  const straightness = isShortArc && form.frame === 'none' ? straightnessOf(measures, referenceEpochYr) : undefined
   return {
     format: 1,
     kind: 'relative',
@@ -151,9 +176,12 @@ export function judgeRelative(judgement: Judgement): FitResult {
     residuals,
     alternatives,
     proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, context) : [],
-    warnings: [...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }), ...aboutNights(measures.countedNights)],
+    warnings: [
+      ...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
+      ...aboutHeld(form.held), ...aboutFrame(form.frame, referenceEpochYr), ...aboutNights(measures.countedNights),
+    ],
     state: {
-      model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(solution.values),
+      model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(regular),
       covariance: publishedCovariance(errors.covariance, errors.scale.published), referenceEpochYr,
     },
   }

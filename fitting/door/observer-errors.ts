@@ -58,7 +58,7 @@ function groupsOf(used: readonly SkyMeasure[], { solution }: SettledPath): Map<s
 
 /** Errors of all groups, by key in code-unit order. */
 function errorsOf(groups: ReadonlyMap<string, Group>): Map<string, ObserverError> {
-  const keys = [...groups.keys()].sort()
+  const keys = [...groups.keys()].sort((a, b) => (a < b ? -1 : 1))
   const own = (group: Group) => Math.sqrt(group.squares / group.rowsToSpare)
   const known = keys.map((key) => groups.get(key)!).filter((group) => group.rowsToSpare >= LEAST_ROWS_TO_SPARE)
   const all = [...groups.values()]

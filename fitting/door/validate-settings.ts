@@ -11,14 +11,14 @@ const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
 
 /** Settings that have a meaning, by kind. */
 const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
-  relative: ['model', 'loss', 'weights', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  relative: ['model', 'loss', 'weights', 'hold', 'frameOffset', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   plane: ['model', 'loss', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   equatorial: ['model', 'loss', 'weights', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
 }
 
 const CHOICES: Partial<Record<keyof FitSettings, readonly unknown[]>> = {
   model: ['kepler', 'line', 'still'], loss: ['squares', 'huber', 'biweight'], weights: ['stated', 'equal', 'by-observer'],
-  conicClass: ['any', 'ellipse', 'parabola', 'circle'], forces: ['sun', 'planets'], normalPoints: [true, false],
+  conicClass: ['any', 'ellipse', 'parabola', 'circle'], frameOffset: ['none', 'offset', 'offset-and-drift'], forces: ['sun', 'planets'], normalPoints: [true, false],
 }
 
 /** Finite number above the lower bound and up to the upper. */
@@ -30,14 +30,15 @@ const RANGES: Partial<Record<keyof FitSettings, readonly [number, number]>> = {
 const MODELS: Record<Kind, readonly string[]> = { relative: ['kepler', 'line', 'still'], plane: ['kepler'], equatorial: ['kepler'] }
 const WEIGHTS: Record<Kind, readonly string[]> = { relative: ['stated', 'equal', 'by-observer'], plane: ['stated', 'equal'], equatorial: ['stated', 'equal'] }
 
-/** The biweight is served for orbits of double stars only. */
+/** Robust losses are served for orbits of double stars only. */
 function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
-  return loss === undefined || loss === 'squares' || (loss === 'biweight' && kind === 'relative' && (model ?? 'kepler') === 'kepler')
+  return loss === undefined || loss === 'squares' || (kind === 'relative' && (model ?? 'kepler') === 'kepler')
 }
 
-/** What equatorial fits serve beyond the defaults. */
-function isServedEquatorial(name: keyof FitSettings, value: unknown): boolean {
-  return name === 'forces' || (name === 'conicClass' && value === 'parabola')
+/** What is served beyond the defaults. */
+function isServedBeyond(kind: Kind, name: keyof FitSettings, value: unknown): boolean {
+  if (kind === 'equatorial') return name === 'forces' || (name === 'conicClass' && value === 'parabola')
+  return name === 'conicClass' && kind === 'relative'
 }
 
 function checkValue(name: keyof FitSettings, value: unknown): void {
@@ -63,10 +64,9 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
   for (const name of Object.keys(settings) as (keyof FitSettings)[]) {
     const value = settings[name]
     if (value === undefined) continue
-    if (name === 'hold') refuse('setting-not-available', 'Holding elements at given values is not available in this version of the engine.', LATER)
     if (!SERVED[kind].includes(name)) refuse('setting-not-available', `The setting ${String(name).slice(0, 40)} is not available for ${kind} fits.`, LATER)
     checkValue(name, value)
-    if (name in DEFAULT_ONLY && value !== DEFAULT_ONLY[name] && !(kind === 'equatorial' && isServedEquatorial(name, value))) {
+    if (name in DEFAULT_ONLY && value !== DEFAULT_ONLY[name] && !isServedBeyond(kind, name, value)) {
       refuse('setting-not-available', `The setting ${name} = ${String(value)} is not available in this version of the engine.`, LATER)
     }
   }
@@ -74,7 +74,10 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
     refuse('setting-not-available', `The model ${settings.model} is not available for ${kind} fits.`, LATER)
   }
   if (!isLossServed(kind, settings)) {
-    refuse('setting-not-available', `The loss ${settings.loss} is not available for this fit.`, 'Leave it out for least squares; biweight is available for orbits of double stars.')
+    refuse('setting-not-available', `The loss ${settings.loss} is not available for this fit.`, 'Leave it out for least squares; huber and biweight are available for orbits of double stars.')
+  }
+  if (settings.frameOffset !== undefined && settings.frameOffset !== 'none' && (settings.model ?? 'kepler') !== 'kepler') {
+    refuse('setting-not-available', `With the model ${settings.model} an offset of the reference point cannot be told from the motion itself.`, 'Leave frameOffset out, or fit an orbit.')
   }
   if (settings.weights !== undefined && !WEIGHTS[kind].includes(settings.weights)) {
     refuse('setting-not-available', `The weights ${settings.weights} are not available for ${kind} fits.`, LATER)

@@ -1,5 +1,5 @@
 /**
- * The last step with Tukey's biweight: weights from the residuals, a full fit with these weights, and again until the weights settle.
+ * The last step with a robust loss, Tukey's or Huber's: weights from the residuals, a full fit with these weights, and again until the weights settle.
  * The scale is taken anew in the first five rounds and then held, so that the rounds converge.
  * Source: Beaton & Tukey 1974, Technometrics 16, 147; iterated reweighting: Holland & Welsch 1977, Comm. Statistics A6, 813.
  */
@@ -7,7 +7,7 @@ import { skyProblem, skyRows } from '../models/relative-problem'
 import { rowsOf, withRobustWeights, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import type { SkyPath } from '../models/sky-path'
 import { evaluateRow, rowBuffer, skyRow } from '../models/sky-rows'
-import { biweight, robustScale, trimmedSum, type RobustScale } from '../solve/biweight'
+import { biweight, huberWeight, robustScale, trimmedSum, type RobustScale } from '../solve/biweight'
 import { solveLeastSquares } from '../solve/levenberg-marquardt'
 import { computedRho, settleStarts, type SettledPath } from './settle-path'
 
@@ -48,22 +48,33 @@ export interface RobustlySettled {
   solutions: SettledPath[]
 }
 
+export interface RobustLoss {
+  loss: 'huber' | 'biweight'
+  /** Parameters from the fourth on are the turned constants: the orbit may be turned by 180°. */
+  canTurn: boolean
+}
+
 /**
- * Fits an orbit with biweights.
+ * Fits an orbit with robust weights.
  * @param path the orbit's path.
  * @param measures prepared measures.
  * @param starts best candidate first, at least one, inside the domain.
+ * @param how which loss, and whether the orbit may be turned.
  * @returns weighted measures and solutions.
  */
-export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: readonly ArrayLike<number>[]): RobustlySettled {
+export function settleRobustly(path: SkyPath, measures: SkyMeasures, starts: readonly ArrayLike<number>[], { loss, canTurn }: RobustLoss): RobustlySettled {
   const { used } = measures
-  let values: Float64Array = betterTurned(path, starts[0]!, used)
+  let values: Float64Array = canTurn ? betterTurned(path, starts[0]!, used) : Float64Array.from(starts[0]!)
   let weighted = measures
   let scale: RobustScale = { pair: 1, single: 1 }
   for (let round = 0; round < LARGEST_ROUNDS; round++) {
     const distances = distancesOf(path, values, used)
     if (round < SCALE_ROUNDS) scale = robustScale(distances, (i) => rowsOf(used[i]!) === 2)
-    const weights = distances.map((d, i) => biweight(d, rowsOf(used[i]!) === 2 ? scale.pair : scale.single))
+    const weights = distances.map((d, i) => {
+      const isPair = rowsOf(used[i]!) === 2
+      const own = isPair ? scale.pair : scale.single
+      return loss === 'huber' ? huberWeight(d, own, isPair) : biweight(d, own)
+    })
     const change = weights.reduce((largest, weight, i) => Math.max(largest, Math.abs(weight - weighted.used[i]!.robustWeight)), 0)
     weighted = withRobustWeights(measures, weights)
     const rows = skyRows(weighted.used, computedRho(path, values, weighted.used))

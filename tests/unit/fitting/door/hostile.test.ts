@@ -80,7 +80,10 @@ describe('values that are no measures are refused by name of the measure', () =>
 
 describe('settings are served or refused, never ignored', () => {
   it.each([
-    ['setting-not-available', { hold: { period: 40 } }],
+    ['setting-out-of-range', { hold: { period: -40 } }],
+    ['setting-out-of-range', { frameOffset: 'some' }],
+    ['setting-not-available', { frameOffset: 'offset', model: 'line' }],
+    ['setting-not-available', { loss: 'huber', model: 'line' }],
     ['setting-not-available', { conicClass: 'parabola' }],
     ['setting-not-available', { forces: 'planets' }],
     ['setting-not-available', { normalPoints: true }],
