@@ -32,7 +32,7 @@ export function distanceSheet(path: readonly Prediction[], { fromJd, lastMeasure
   const [low, high] = [Math.max(0, Math.min(...all) - room), Math.max(...all) + room]
   const x = (jd: number) => tenth(left + ((jd - fromJd) / (toJd - fromJd)) * (widthPx - left - right))
   const y = (au: number) => tenth(heightPx - bottom - ((au - low) / (high - low)) * (heightPx - top - bottom))
-  const ticks = axisTicks(low, high, 5)
+  const ticks = axisTicks(low, high, 7)
   const curve = (pick: (point: (typeof points)[number]) => number) => `M${points.map(point => `${x(point.at)} ${y(pick(point))}`).join('L')}`
   const last = points[points.length - 1]!
   const [earthY, sunY] = apart(y(last.distanceAu), y(last.sunDistanceAu))

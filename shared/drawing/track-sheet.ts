@@ -2,7 +2,7 @@ import type { FitResult, Prediction } from '../../fitting/types'
 import { formatJulianDay } from '../units/date-text'
 import type { Point } from './conic-outline'
 import { frameAround } from './drawing-frame'
-import { labelPoints, placeLabel, type DrawnLabel } from './label-place'
+import { emptiestBox, labelPoints, placeLabel, type DrawnLabel } from './label-place'
 import { graticule, type Graticule } from './sky-graticule'
 import { middleOf, skyProjection, type SkyDirection } from './sky-projection'
 import { SKY_SHEET_PX, type DrawnMeasure } from './sky-sheet'
@@ -18,6 +18,8 @@ export interface TrackSheet extends Graticule {
   coming: string
   dates: { at: Point; label: DrawnLabel; isComing: boolean }[]
   measures: DrawnMeasure[]
+  /** Where the arrows to north and east meet. */
+  compassAt: Point
 }
 
 interface Track {
@@ -39,11 +41,13 @@ export function trackSheet({ result, span, path, marked }: Track): TrackSheet | 
   const places = [...along, ...seen.map(({ observed }) => ({ direction: observed }))].map(({ direction }) => project(direction))
   const frame = frameAround(places, { widthPx: SKY_SHEET_PX, heightPx: SKY_SHEET_PX, marginPx: MARGIN_PX, isEastLeft: true })
   const toPx = (direction: SkyDirection) => frame.toPx(project(direction))
+  const obstacles = [...along.map(one => toPx(one.direction)), ...seen.map(measure => toPx(measure.observed))]
   const line = (isWithin: (jd: number) => boolean) => pathOf(along.filter(one => isWithin(one.jd)).map(one => toPx(one.direction)))
   return {
     measured: line(jd => jd <= span.lastMeasureJd),
     coming: line(jd => jd >= span.lastMeasureJd),
-    dates: datesOf(marked.flatMap(placeOf).map(({ jd, direction }) => ({ jd, at: toPx(direction) })), along.map(one => toPx(one.direction)), span),
+    compassAt: freeCorner(obstacles),
+    dates: datesOf(marked.flatMap(placeOf).map(({ jd, direction }) => ({ jd, at: toPx(direction) })), obstacles, span),
     measures: seen.map(({ id, status, observed, computed }) => ({ id, status, at: toPx(observed), computedAt: toPx(computed) })),
     ...graticule({ middle, toPx, fieldDeg: SKY_SHEET_PX / frame.pxPerUnit, sizePx: SKY_SHEET_PX }),
   }
@@ -73,6 +77,13 @@ export function trackMeasures(result: FitResult): TrackMeasure[] {
     }
     return [{ id, status, observed, computed: { raDeg, decDeg } }]
   })
+}
+
+/** The compass takes the emptier upper corner. */
+function freeCorner(obstacles: readonly Point[]): Point {
+  const far = SKY_SHEET_PX
+  const isAtLeft = emptiestBox([{ left: far - 130, right: far, top: 0, bottom: 120 }, { left: 0, right: 150, top: 0, bottom: 120 }], obstacles) === 1
+  return { x: isAtLeft ? 116 : far - 32, y: 66 }
 }
 
 function datesOf(places: readonly { jd: number; at: Point }[], path: readonly Point[], { lastMeasureJd }: TrackSpan): TrackSheet['dates'] {

@@ -63,13 +63,15 @@ export function withUnit(text: string, unit: string): string {
 }
 
 /**
- * Writes an element for a table: a Julian date becomes the date that observers read.
+ * Writes an element for a table: of a Julian date the year and month go to the words, the day with its decimals stays a number.
  * @param element value and error to publish, with their unit
- * @returns value and σ with the same decimals, and the sign of the unit: "2026 Apr 12.314", "0.021", "d"
+ * @returns value and σ with the same decimals, the sign of the unit, and what goes before the value in words:
+ * "12.314", "0.021", "d" and "2026 Apr"; empty words for any other unit
  */
-export function elementCells(element: Element): ValueAndSigma & { unit: string } {
+export function elementCells(element: Element): ValueAndSigma & { unit: string, month: string } {
   const { value, sigma } = formatValueAndSigma(element.value, element.sigma)
-  if (element.unit !== 'JD TT') return { value, sigma, unit: unitSymbol(element.unit) }
+  if (element.unit !== 'JD TT') return { value, sigma, unit: unitSymbol(element.unit), month: '' }
   const decimals = Math.min(6, Math.max(0, decimalsForSigma(element.sigma) ?? 2))
-  return { value: formatJulianDate(element.value, decimals), sigma, unit: 'd' }
+  const [year = '', month = '', day = ''] = formatJulianDate(element.value, decimals).split(' ')
+  return { value: day, sigma, unit: 'd', month: `${year} ${month}` }
 }

@@ -1,5 +1,6 @@
 import type { FitOutcome, FitResult, Refusal } from '../../../fitting/types'
 import type { FitSummary } from '#shared/schemas/fits'
+import { resultTitle } from '#shared/units/result-title'
 import type { FitLine, FitRecord } from '../../repositories/fit-repository'
 
 const readResults = new WeakMap<object, FitResult>()
@@ -24,9 +25,9 @@ export function outcomeOf(fit: Pick<FitRecord, 'result' | 'refusal'>): FitOutcom
   return refusal ? { ok: false, refusal } : null
 }
 
-/** What a fit says in one line: the statement about its conic, why it stopped, or why there is none. */
+/** What a fit says in one line: what its conic is, that there is none so far, or why it could not be made. */
 export function headlineOf(result: FitResult | null, refusal: Refusal | null): string | null {
-  if (result) return result.conic?.statement ?? result.stop.sentence
+  if (result) return resultTitle(result)
   return refusal?.sentence ?? null
 }
 

@@ -5,7 +5,7 @@ import { formatFileSize } from '../../../../shared/units/file-size'
 import { joinWords } from '../../../../shared/units/list-text'
 import { formatDigits, formatNumber, formatSigned } from '../../../../shared/units/number-text'
 import { unitSymbol } from '../../../../shared/units/unit-symbol'
-import { formatElement, formatValueAndSigma } from '../../../../shared/units/value-and-sigma'
+import { elementCells, formatElement, formatValueAndSigma } from '../../../../shared/units/value-and-sigma'
 
 const element = (value: number, sigma: number | null, unit: string) => ({ value, sigma, sigmaFormal: sigma, sigmaScaled: sigma, unit })
 
@@ -95,5 +95,13 @@ describe('sizes and lists', () => {
   it('read as a person would say them', () => {
     expect([1, 812, 2413, 31_400_000].map(formatFileSize)).toEqual(['1 byte', '812 bytes', '2.4 kB', '31 MB'])
     expect([[], ['a'], ['a', 'b'], ['a', 'b', 'c']].map(joinWords)).toEqual(['', 'a', 'a and b', 'a, b and c'])
+  })
+})
+
+describe('an element in a table', () => {
+  it('has a time of perihelion as a day with its decimals, the month in words', () => {
+    expect(elementCells(element(2461142.81436, 0.021, 'JD TT'))).toEqual({ value: '12.314', sigma: '0.021', unit: 'd', month: '2026 Apr' })
+    expect(elementCells(element(2461142.81436, null, 'JD TT'))).toEqual({ value: '12.31', sigma: null, unit: 'd', month: '2026 Apr' })
+    expect(elementCells(element(64.21, 0.03, 'deg'))).toEqual({ value: '64.210', sigma: '0.030', unit: '°', month: '' })
   })
 })
