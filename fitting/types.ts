@@ -272,6 +272,19 @@ export interface ObserverError {
   basis: 'estimated' | 'typical' | 'floor'
 }
 
+/** Several measures close in time as one, about a provisional orbit. */
+export interface NormalPoint {
+  /** Weighted mean, Julian year. */
+  epochYr: number
+  northArcsec: number
+  eastArcsec: number
+  sigmaNorthArcsec: number
+  sigmaEastArcsec: number
+  correlation: number
+  /** Identifiers of the measures in it. */
+  members: string[]
+}
+
 export interface FitStatistics {
   measures: number
   used: number
@@ -325,6 +338,8 @@ export interface FitResult {
   constants: Constants | null
   statistics: FitStatistics
   residuals: Residual[]
+  /** Relative, with normalPoints: the points of two or more measures; residuals remain those of the measures. */
+  normalPoints?: NormalPoint[]
   alternatives: Alternative[]
   proposals: Proposal[]
   warnings: string[]

@@ -27,7 +27,8 @@ export function withEstimatedErrors(measures: SkyMeasures, { solution }: Settled
  */
 export function estimatedSigma(measures: SkyMeasures): Pick<FitStatistics, 'estimatedSigma'> {
   if (measures.basis !== 'scaled') return {}
-  return { estimatedSigma: { position: { value: measures.used[0]!.sigmaAlong / measures.used[0]!.nightsFactor, unit: 'arcsec' } } }
+  const { sigmaAlong, nightsFactor } = measures.all.find((measure) => measure.status === 'used')!
+  return { estimatedSigma: { position: { value: sigmaAlong / nightsFactor, unit: 'arcsec' } } }
 }
 
 /**

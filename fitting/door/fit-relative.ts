@@ -1,14 +1,16 @@
 /** The relative orbit from request to result: errors, search or refit, solution, judgement. */
+import { exp } from '../elementary'
 import { relativeForm, type RelativeForm } from '../models/relative-form'
 import { RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import { searchRelative, type SearchRequest } from '../search/blind-search'
+import { withNormalPoints } from '../search/normal-points'
 import { searchHeld } from '../search/held-search'
 import { searchRobustly } from '../search/robust-search'
 import { preferredSolution } from '../search/prefer-longer'
 import { settlePath, settleStarts, type SettledPath } from '../search/settle-path'
 import { settleRobustly, type RobustlySettled } from '../search/settle-robustly'
-import type { FitResult, FitSettings, FitStart, ObserverError, RelativeMeasure } from '../types'
+import type { FitResult, FitSettings, FitStart, NormalPoint, ObserverError, RelativeMeasure } from '../types'
 import { withEstimatedErrors } from './estimated-errors'
 import { fitMotion } from './fit-motion'
 import { judgeRelative } from './judge-relative'
@@ -25,6 +27,7 @@ const DEFAULT_SHORTEST_PERIOD_YR = 0.5
 /** Minima are alternatives up to this much above the best, in units of the reduced χ² where that is above 1. */
 const ALTERNATIVE_WITHIN = 9
 const ALTERNATIVES_AT_MOST = 8
+const NORMAL_POINT_PASSES = 2
 /** The search ranks with rows linearised about the observed ρ; this factor keeps what that may have moved. */
 const SEARCH_MARGIN = 1.2
 
@@ -112,6 +115,23 @@ function withErrorsFromResiduals(request: RelativeRequest, form: RelativeForm, p
   return estimated === provisional.measures ? provisional : again(estimated, provisional.solutions)
 }
 
+/** The same orbits through normal points; the points follow the orbit once more, so that the provisional one leaves no trace. */
+function throughNormalPoints(form: RelativeForm, fit: RobustlySettled): RobustlySettled & { normalPoints: NormalPoint[] } {
+  const periodYr = exp(form.regular(fit.solutions[0]!.solution.values)[0]!)
+  let { measures, solutions } = fit
+  let normalPoints: NormalPoint[] = []
+  for (let pass = 0; pass < NORMAL_POINT_PASSES; pass++) {
+    const pointed = withNormalPoints(fit.measures, { path: form.path, values: solutions[0]!.solution.values, periodYr })
+    if (pointed.measures.used.reduce((sum, measure) => sum + rowsOf(measure), 0) < form.path.parameters) {
+      refuse('too-few-measures', 'Fewer normal points are left than the orbit needs: the measures stand too close together.', 'Fit the single measures.')
+    }
+    normalPoints = pointed.points
+    measures = pointed.measures
+    solutions = settleStarts(form.path, measures.used, solutions.map(({ solution }) => solution.values), () => undefined)
+  }
+  return { measures, solutions, normalPoints }
+}
+
 /**
  * Fits a relative orbit, straight motion or rest.
  * @param request with checked list and settings.
@@ -131,8 +151,9 @@ export function fitRelative(request: RelativeRequest): FitResult {
   const starts = regularStarts(request, prepared, middle, form).flatMap((start) => form.starts(start))
   const provisional = settleAll(request, form, prepared, starts)
   if (provisional.solutions.length === 0) refuse('no-orbit-found', 'The search found no orbit for these measures.', 'Look for changed quadrants and mistyped epochs, or fit a straight line.')
-  const { measures, solutions, observerErrors } = withErrorsFromResiduals(request, form, provisional)
-  const result = judgeRelative({ solutions, form, measures, observerErrors, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
+  const errors = withErrorsFromResiduals(request, form, provisional)
+  const { measures, solutions, normalPoints } = request.settings.normalPoints ? throughNormalPoints(form, errors) : { ...errors, normalPoints: undefined }
+  const result = judgeRelative({ solutions, form, measures, observerErrors: errors.observerErrors, normalPoints, referenceEpochYr, settings: request.settings, alternativeWithin: ALTERNATIVE_WITHIN })
   request.report('judging', 1)
   return result
 }

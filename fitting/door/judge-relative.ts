@@ -7,7 +7,7 @@ import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
 import type { SettledPath } from '../search/settle-path'
 import { covarianceOf } from '../solve/covariance'
-import type { Alternative, Element, FitResult, FitSettings, FitStatistics, ObserverError } from '../types'
+import type { Alternative, Element, FitResult, FitSettings, FitStatistics, NormalPoint, ObserverError } from '../types'
 import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
 import { aboutFrame, frameElements, frameShift } from '../uncertainty/frame-elements'
 import { aboutHeld, markHeld, withHeldQuantities } from '../uncertainty/held-elements'
@@ -21,6 +21,13 @@ import { straightnessOf } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
 import { estimatedSigma } from './estimated-errors'
 import { stopSentence } from './stop-sentence'
+
+/** What to say about normal points. */
+function aboutNormalPoints(points: readonly NormalPoint[] | undefined, places: number): string[] {
+  if (points === undefined) return []
+  const members = points.reduce((sum, point) => sum + point.members.length, 0)
+  return [`${members} measures stand in ${points.length} normal points of at most a fiftieth of the period; χ² and degrees of freedom are those of ${places} places, residuals those of the measures.`]
+}
 
 /** Coordinates whose scatter is reported. */
 export const SKY_UNITS = {
@@ -39,6 +46,8 @@ export interface Judgement {
   settings: FitSettings
   /** Where errors were estimated by observer. */
   observerErrors?: ObserverError[]
+  /** Where the fit went through normal points. */
+  normalPoints?: NormalPoint[]
   alternativeWithin: number
 }
 
@@ -112,7 +121,7 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; r
   const degreesOfFreedom = Math.max(0, effectiveRows(used) - values.length)
   return {
     measures: measures.all.length,
-    used: used.length,
+    used: measures.all.filter((measure) => measure.status === 'used').length,
     rows: residuals.length,
     parameters: values.length,
     degreesOfFreedom,
@@ -174,11 +183,12 @@ export function judgeRelative(judgement: Judgement): FitResult {
     constants: relativeConstants(elements, errors, used.map((measure) => measure.epochYr)),
     statistics,
     residuals,
+    ...(judgement.normalPoints ? { normalPoints: judgement.normalPoints } : {}),
     alternatives,
     proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, context) : [],
     warnings: [
       ...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
-      ...aboutHeld(form.held), ...aboutFrame(form.frame, referenceEpochYr), ...aboutNights(measures.countedNights),
+      ...aboutHeld(form.held), ...aboutFrame(form.frame, referenceEpochYr), ...aboutNights(measures.countedNights), ...aboutNormalPoints(judgement.normalPoints, used.length),
     ],
     state: {
       model: 'kepler', names: [...RELATIVE_KEPLER_NAMES], values: Array.from(regular),

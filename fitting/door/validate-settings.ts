@@ -38,7 +38,7 @@ function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
 /** What is served beyond the defaults. */
 function isServedBeyond(kind: Kind, name: keyof FitSettings, value: unknown): boolean {
   if (kind === 'equatorial') return name === 'forces' || (name === 'conicClass' && value === 'parabola')
-  return name === 'conicClass' && kind === 'relative'
+  return kind === 'relative' && (name === 'conicClass' || name === 'normalPoints')
 }
 
 function checkValue(name: keyof FitSettings, value: unknown): void {
@@ -78,6 +78,9 @@ export function validateSettings(kind: Kind, settings: FitSettings): void {
   }
   if (settings.frameOffset !== undefined && settings.frameOffset !== 'none' && (settings.model ?? 'kepler') !== 'kepler') {
     refuse('setting-not-available', `With the model ${settings.model} an offset of the reference point cannot be told from the motion itself.`, 'Leave frameOffset out, or fit an orbit.')
+  }
+  if (settings.normalPoints && ((settings.model ?? 'kepler') !== 'kepler' || (settings.loss ?? 'squares') !== 'squares')) {
+    refuse('setting-not-available', 'Normal points are means about an orbit by least squares: they go with no other model and no robust loss.', 'Set outliers aside first, then fit normal points with squares.')
   }
   if (settings.weights !== undefined && !WEIGHTS[kind].includes(settings.weights)) {
     refuse('setting-not-available', `The weights ${settings.weights} are not available for ${kind} fits.`, LATER)
