@@ -13,14 +13,21 @@ export function useBatch(batchId: string) {
   const outcome = ref<SendOutcome | null>(null)
   const path = `/batches/${batchId}`
   const reading = useApiData<BatchView>(() => path)
-  const readAgain = async () => (await reading).refresh()
+  /** What is being discarded is not read again: the answer would be that it is not there. */
+  const isLeaving = ref(false)
+  const readAgain = async () => {
+    if (!isLeaving.value) await (await reading).refresh()
+  }
   useEvents([`batch:${batchId}`], () => void readAgain(), () => void readAgain())
 
   return reading.then(({ data: batch }) => {
     /** Runs an action that answers with the batch as it is afterwards. */
     async function change(action: () => Promise<BatchView>): Promise<BatchView | undefined> {
       const changed = await run(action)
-      if (changed) batch.value = changed
+      if (changed) {
+        batch.value = changed
+        outcome.value = null
+      }
       return changed
     }
 
@@ -42,8 +49,10 @@ export function useBatch(batchId: string) {
       chooseTarget: (targetId: string) => change(() => api.put<BatchView>(`${path}/target`, { targetId })),
       withdraw: (targetId: string) => change(() => api.post<BatchView>(`${path}/withdraw`, { targetId })),
       async discard() {
+        isLeaving.value = true
         await run(() => api.remove(path))
-        return trouble.value === null
+        isLeaving.value = trouble.value === null
+        return isLeaving.value
       },
     }
   })

@@ -75,13 +75,18 @@ describe.each([{ name: 'at a desk', size: DESK }, { name: 'on a phone', size: PH
     await context.close()
   })
 
-  it('adds nothing when the same file comes again', async () => {
+  it('adds nothing when the same file comes again, and puts that draft away', async () => {
     const { context, page } = await openAs(house.signIns.observer)
     await page.goto(`/uploads?target=${house.targetId}`)
     await page.locator('input[type=file]').setInputFiles({ name: 'winter again.csv', mimeType: 'text/csv', buffer: Buffer.from(fileText()) })
     await page.getByRole('button', { name: 'Read the measures' }).click()
     await page.waitForURL(/\/uploads\/[a-z2-7]{26}$/)
     await expect.poll(() => page.locator('main').innerText()).toMatch(/0 (good|new)[\s\S]*25 already here/)
+    await page.getByRole('button', { name: 'Discard' }).click()
+    await page.getByRole('dialog').getByRole('button', { name: 'Discard' }).click()
+    await page.waitForURL(/\/uploads$/)
+    await page.getByRole('heading', { name: 'Uploads', level: 1 }).waitFor()
+    expect(await page.getByText('winter again.csv').count()).toBe(0)
     await context.close()
   })
 
