@@ -2,9 +2,9 @@
 import { lengthOf } from '../conic/state'
 import { SUN_GRAVITATION_AU3_PER_D2 as MU, SUN_OVER_PLANET_MASS } from '../earth'
 import { orbitOfState, stateOfValues, type Forces } from '../models/equatorial-orbit'
-import { emptyLineOfSight, lineOfSightInto, roughLightTime } from '../models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto, roughLightTime } from '../models/line-of-sight'
 import { prepareSightings, rescaleSightings, whiten, type Sightings } from '../models/sighting'
-import { firstStates, middleReference, settleSights, stateOf, type DatedState, type SettledSights, type SettleOptions } from '../search/settle-sights'
+import { firstStates, middleReference, settleSights, stateOf, WHOLE_ARC_DAYS, type DatedState, type SettledSights, type SettleOptions } from '../search/settle-sights'
 import type { EquatorialMeasure, FitResult, FitSettings, FitStart } from '../types'
 import { defaultForces } from '../uncertainty/honest-arc'
 import { skyMotionOf } from '../uncertainty/sight-residuals'
@@ -125,7 +125,9 @@ export function fitEquatorial(request: EquatorialRequest): FitResult {
   const sunSettled = settleSights(used, states, middleReference(used), { forces: 'sun', isParabola: false })
   const forces = settings.forces ?? forcesOf(sunSettled, sightings, days, first.isHopeless)
   report('polishing', 0.3)
-  const settled = settleAll(sightings, forces === 'sun' && !isParabola && sunSettled.length > 0 ? sunSettled.map(stateOf) : states, { forces, isParabola })
+  // Over a long arc the planets' pull would lead the Sun's conic astray: there the states of the search are better starts.
+  const isNear = sunSettled.length > 0 && (forces === 'sun' || days <= WHOLE_ARC_DAYS)
+  const settled = settleAll(sightings, isNear ? sunSettled.map(stateOf) : states, { forces, isParabola })
   if (settled.length === 0) refuse('no-orbit-found', 'No orbit about the Sun passes near these directions.', 'Check times, positions and stations; leave doubtful measures out.')
   refuseEarthBound(settled[0]!)
   report('polishing', 1)

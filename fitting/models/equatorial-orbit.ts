@@ -4,7 +4,7 @@ import { SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth'
 import type { FitState, SightReference } from '../types'
 import { planetMotion } from './planet-motion'
 import { parabolaMap, sightMap, type StateMap } from './sight-frame'
-import { sunMotion, type Motion } from './sight-rows'
+import { sunMotion, type Motion } from './line-of-sight'
 
 export type Forces = 'sun' | 'planets'
 

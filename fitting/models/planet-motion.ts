@@ -9,7 +9,7 @@
  */
 import { SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth'
 import { PLANET_GRAVITATION, PlanetTable } from './planet-table'
-import type { Motion } from './sight-rows'
+import type { Motion } from './line-of-sight'
 
 /** Six of the state, 36 of its derivatives. */
 const STATE = 6

@@ -10,7 +10,8 @@
  */
 import { LIGHT_AU_PER_D, SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth/constants'
 import { exp, log } from '../elementary'
-import { emptyLineOfSight, lineOfSightInto, roughLightTime, sunMotion, type Sight } from '../models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto, roughLightTime, sunMotion } from '../models/line-of-sight'
+import type { Sight } from '../models/sight-rows'
 import { joinInto } from './lambert'
 
 const STEPS = 24

@@ -10,7 +10,8 @@ import type { Vector } from '../conic/state'
 import { moveInto } from '../conic/universal'
 import { LIGHT_AU_PER_D, SUN_GRAVITATION_AU3_PER_D2 as MU } from '../earth/constants'
 import { sightMap, sightOfState } from '../models/sight-frame'
-import { sightProblem, sunMotion, type Sight } from '../models/sight-rows'
+import { sunMotion } from '../models/line-of-sight'
+import { sightProblem, type Sight } from '../models/sight-rows'
 import { isInsideDomain } from '../solve/least-squares-problem'
 import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
 import type { SightReference } from '../types'
@@ -23,6 +24,8 @@ const GRID_CANDIDATES_FOR_THREE = 40
 /** Steps of the first polish, and how many of its results are followed to the end. */
 const FIRST_POLISH = 30
 const FOLLOWED = 5
+/** Where the list was thinned, only what comes this close to the best χ² of the thinned one is followed. */
+const WORTH_FOLLOWING = { times: 4, plus: 100 }
 /** Two solutions are one where no parameter differs by more than this part of it, or of the second number where it is smaller. */
 const SAME_WITHIN = 1e-4
 const USUAL = 0.01
@@ -122,6 +125,7 @@ export function searchFirstOrbits(sights: readonly Sight[], reference: SightRefe
   const motion = sunMotion(epoch)
   const polished = settleDistinct(sightProblem(few, map, motion), starts, FIRST_POLISH)
   onProgress(0.9)
-  const followed = polished.slice(0, sights.length === 3 ? polished.length : FOLLOWED).map((solution) => solution.values)
+  const limit = few.length < sights.length ? WORTH_FOLLOWING.times * (polished[0]?.chiSquare ?? 0) + WORTH_FOLLOWING.plus : Infinity
+  const followed = polished.slice(0, sights.length === 3 ? polished.length : FOLLOWED).filter(({ chiSquare }) => chiSquare <= limit).map(({ values }) => values)
   return settleDistinct(sightProblem(sights, map, motion), followed, 200)
 }

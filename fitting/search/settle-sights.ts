@@ -13,7 +13,7 @@ import type { SightReference } from '../types'
 import { isSameOrbit, searchFirstOrbits } from './first-orbit'
 
 /** Arcs up to this are searched as a whole, d. */
-const WHOLE_ARC_DAYS = 130
+export const WHOLE_ARC_DAYS = 130
 /** Epochs of longer arcs than this are rounded to 0h TT. */
 const ROUND_EPOCH_BEYOND_DAYS = 2
 /** How many orbits of a part of the arc are followed to the whole. */

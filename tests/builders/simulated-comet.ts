@@ -1,7 +1,7 @@
 import { observerHeliocentric } from '../../fitting/earth'
 import { stateFromPerihelion } from '../../fitting/models/perihelion'
 import { planetMotion } from '../../fitting/models/planet-motion'
-import { emptyLineOfSight, lineOfSightInto } from '../../fitting/models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto } from '../../fitting/models/line-of-sight'
 import { randomStream } from '../../fitting/random'
 import type { MeasureSite } from '../../fitting/types'
 import { formatDeclination, formatRightAscension } from '../../shared/units/sexagesimal'

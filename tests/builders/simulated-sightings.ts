@@ -1,6 +1,6 @@
 import { observerHeliocentric } from '../../fitting/earth'
 import { perihelionFromState, stateFromPerihelion, type PerihelionElements } from '../../fitting/models/perihelion'
-import { emptyLineOfSight, lineOfSightInto, sunMotion, type Motion } from '../../fitting/models/sight-rows'
+import { emptyLineOfSight, lineOfSightInto, sunMotion, type Motion } from '../../fitting/models/line-of-sight'
 import { randomStream } from '../../fitting/random'
 import type { EquatorialMeasure } from '../../fitting/types'
 
