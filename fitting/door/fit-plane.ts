@@ -1,10 +1,12 @@
 /** A conic from directions and distances in its plane, from request to result. */
 import { atan2, hypot } from '../elementary'
+import { planeMotionProblem } from '../models/plane-motion'
 import { planeProblem, PLANE_NAMES, parabolaProblem, reciprocalProblem } from '../models/plane'
 import { preparePlanePoints, rescalePlanePoints, type PlanePoints } from '../models/plane-measure'
-import { isInsideDomain } from '../solve/least-squares-problem'
+import { isInsideDomain, type LeastSquaresProblem } from '../solve/least-squares-problem'
 import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
 import type { FitResult, FitSettings, FitStart, PlaneMeasure } from '../types'
+import { hasMotion, middleEpoch, solvePlaneMotion } from './fit-plane-motion'
 import { judgePlane } from './judge-plane'
 import type { Report } from './progress'
 import { refuse } from './refusal'
@@ -51,7 +53,7 @@ function shrunkInside(points: PlanePoints, start: Float64Array): Float64Array {
 }
 
 function startOf(points: PlanePoints, start: FitStart | undefined): Float64Array {
-  if (start) return shrunkInside(points, Float64Array.from(start.state.values))
+  if (start) return shrunkInside(points, Float64Array.from(start.state.values.slice(0, PLANE_NAMES.length)))
   const linear = solveLeastSquares(reciprocalProblem(points.used), [1 / points.used[0]!.r, 0, 0]).values
   if (linear[0]! > 0) return shrunkInside(points, Float64Array.of(1 / linear[0]!, linear[1]! / linear[0]!, linear[2]! / linear[0]!))
   const mean = points.used.reduce((sum, point) => sum + point.r, 0) / points.used.length
@@ -59,11 +61,30 @@ function startOf(points: PlanePoints, start: FitStart | undefined): Float64Array
 }
 
 /** χ² with e = 1 held; null where no parabola reaches every measured direction. */
-function parabolaChiSquare(points: PlanePoints, solution: Solution): number | null {
-  const problem = parabolaProblem(points.used, points.diameterScale)
-  const start = Float64Array.of(solution.values[0]!, atan2(solution.values[2]!, solution.values[1]!))
+function parabolaChiSquare(full: LeastSquaresProblem, { values }: Solution): number | null {
+  const problem = parabolaProblem(full)
+  const start = Float64Array.of(values[0]!, atan2(values[2]!, values[1]!), ...values.subarray(PLANE_NAMES.length))
   if (!isInsideDomain(problem, start)) return null
   return solveLeastSquares(problem, start).chiSquare
+}
+
+interface Solved {
+  /** The one given first; others fit almost as well. */
+  solutions: Solution[]
+  problemOf: (points: PlanePoints) => LeastSquaresProblem
+  referenceEpochYr: number | null
+}
+
+/** Without times the conic alone; with times of three epochs the motion. */
+function solve(points: PlanePoints, { start, report }: PlaneRequest): Solved {
+  const conicOf = ({ used, diameterScale }: PlanePoints) => planeProblem(used, diameterScale)
+  const conic = solveLeastSquares(conicOf(points), startOf(points, start))
+  if (!hasMotion(points.used)) return { solutions: [conic], problemOf: conicOf, referenceEpochYr: null }
+  const isRefit = start !== undefined && start.state.values.length > PLANE_NAMES.length
+  const referenceEpochYr = isRefit ? start.state.referenceEpochYr : middleEpoch(points.used)
+  const solutions = solvePlaneMotion({ points, conic: conic.values, start, referenceEpochYr, report })
+  if (solutions.length === 0) refuse('no-orbit-found', 'No motion about this focus passes near these places at their times.', 'Check times and directions, or leave the times out to fit the shape alone.')
+  return { solutions, problemOf: ({ used, diameterScale }) => planeMotionProblem(used, diameterScale, referenceEpochYr), referenceEpochYr }
 }
 
 /**
@@ -73,20 +94,22 @@ function parabolaChiSquare(points: PlanePoints, solution: Solution): number | nu
  * @throws RefusedRequest where values are out of range or the measures do not suffice.
  */
 export function fitPlane(request: PlaneRequest): FitResult {
-  const { measures, settings, start, report } = request
+  const { measures, settings, report } = request
   validatePlane(measures)
   const prepared = preparePlanePoints(measures, settings)
   checkEnough(prepared, settings)
   report('reading', 1)
-  const first = solveLeastSquares(planeProblem(prepared.used, prepared.diameterScale), startOf(prepared, start))
+  const { solutions: found, problemOf, referenceEpochYr } = solve(prepared, request)
   report('polishing', 1)
-  const degrees = prepared.used.length - PLANE_NAMES.length
+  const [first] = found as [Solution]
+  const degrees = first.residuals.length - first.values.length
   const factor = degrees > 0 ? Math.sqrt(first.chiSquare / degrees) : 0
   const isEstimated = prepared.basis === 'scaled' && factor > 1e-9
   const points = isEstimated ? rescalePlanePoints(prepared, factor) : prepared
-  const solution = isEstimated ? solveLeastSquares(planeProblem(points.used, points.diameterScale), first.values) : first
-  if (!(hypot(solution.values[1]!, solution.values[2]!) < 1e6)) refuse('no-orbit-found', 'The distances fit no conic about this focus.', 'Check units and directions of the measures.')
-  const result = judgePlane({ points, solution, settings, parabolaChiSquare: parabolaChiSquare(points, solution) })
+  const problem = problemOf(points)
+  const [solution, ...others] = isEstimated ? found.map(({ values }) => solveLeastSquares(problem, values)) : found
+  if (!(hypot(solution!.values[1]!, solution!.values[2]!) < 1e6)) refuse('no-orbit-found', 'The distances fit no conic about this focus.', 'Check units and directions of the measures.')
+  const result = judgePlane({ points, solution: solution!, others, settings, referenceEpochYr, parabolaChiSquare: parabolaChiSquare(problem, solution!) })
   report('judging', 1)
   return result
 }

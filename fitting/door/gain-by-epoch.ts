@@ -5,6 +5,7 @@
  */
 import { cos, DEG, hypot, log, sin } from '../elementary'
 import { orbitOfState } from '../models/equatorial-orbit'
+import { PLANE_NAMES } from '../models/plane'
 import { keplerPath } from '../models/relative-kepler'
 import { ARCSEC_RAD } from '../models/sighting'
 import type { FitResult, FitState, Gain, MeasureSigma } from '../types'
@@ -40,7 +41,9 @@ function planeRowsAt(state: FitState, sigma: Extract<MeasureSigma, { kind: 'plan
     const denominator = 1 + k * c + h * s
     if (!(denominator > 0)) return []
     const r = p / denominator
-    return [Float64Array.of(r / p / sigma.sigmaR, (-r * c) / denominator / sigma.sigmaR, (-r * s) / denominator / sigma.sigmaR)]
+    const row = new Float64Array(state.values.length)
+    row.set([r / p / sigma.sigmaR, (-r * c) / denominator / sigma.sigmaR, (-r * s) / denominator / sigma.sigmaR])
+    return [row]
   }
 }
 
@@ -80,7 +83,10 @@ function errorsOf(sigma: MeasureSigma): number[] {
 function quantitiesOf(result: FitResult): Record<string, Quantity> {
   const { state } = result
   if (result.kind === 'equatorial') return equatorialElements(orbitOfState(state), state.values, state.reference!.jdTt).quantities
-  if (result.kind === 'plane') return planeQuantities(state.values, result.elements.semiLatusRectum?.unit ?? '')
+  if (result.kind === 'plane') {
+    const hasTimes = state.values.length > PLANE_NAMES.length
+    return planeQuantities(state.values, result.elements.semiLatusRectum?.unit ?? '', hasTimes ? state.referenceEpochYr : null)
+  }
   const lastEpochYr = result.statistics.arc.lastEpochYr ?? state.referenceEpochYr
   const { quantities } = relativeElements({ values: state.values, covariance: state.covariance, referenceEpochYr: state.referenceEpochYr, lastEpochYr })
   return Object.fromEntries(ELEMENT_NAMES.map((name) => [name, quantities[name]]))

@@ -59,7 +59,8 @@ function planePrediction(state: FitState, phiDeg: number): Prediction {
   const denominator = 1 + k * c + h * s
   if (!(denominator > 0)) return { at: phiDeg, values: {}, sigmas: {}, correlation: null }
   const r = p / denominator
-  const gradient = [r / p, (-r * c) / denominator, (-r * s) / denominator]
+  const gradient = new Float64Array(state.values.length)
+  gradient.set([r / p, (-r * c) / denominator, (-r * s) / denominator])
   return { at: phiDeg, values: { r }, sigmas: { r: sigmaOf(state.covariance, gradient) }, correlation: null }
 }
 

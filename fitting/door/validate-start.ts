@@ -1,6 +1,7 @@
 /** A start is an earlier result's state; one that does not belong to this kind of fit is refused. */
 import { LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { PLANE_NAMES } from '../models/plane'
+import { PLANE_MOTION_NAMES } from '../models/plane-motion'
 import { EQUATORIAL_NAMES, PARABOLA_NAMES } from '../models/sight-frame'
 import type { FitStart, FitState, Kind } from '../types'
 import { refuse } from './refusal'
@@ -11,12 +12,12 @@ const REMEDY = 'Leave the start out, and the search begins from nothing.'
 
 function isInsideDomain(kind: Kind, values: readonly number[]): boolean {
   if (kind === 'equatorial') return values.every((value) => Math.abs(value) < LARGEST_SIGHT_VALUE)
-  if (kind === 'plane') return values[0]! > 0
+  if (kind === 'plane') return values[0]! > 0 && values[3] !== 0
   return Math.abs(values[0]!) < 50 && values[1]! * values[1]! + values[2]! * values[2]! <= LARGEST_S * LARGEST_S
 }
 
 function namesOf(kind: Kind, state: FitState | undefined): readonly string[] {
-  if (kind === 'plane') return PLANE_NAMES
+  if (kind === 'plane') return state?.values?.length === PLANE_MOTION_NAMES.length ? PLANE_MOTION_NAMES : PLANE_NAMES
   if (kind === 'relative') return RELATIVE_KEPLER_NAMES
   return state?.model === 'parabola' ? PARABOLA_NAMES : EQUATORIAL_NAMES
 }

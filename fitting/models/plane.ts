@@ -86,17 +86,16 @@ export function reciprocalProblem(points: readonly PlanePoint[]): LeastSquaresPr
 }
 
 /**
- * The same conic with e = 1 held, in (p, φ₀): for the test of the parabola.
- * @param points used measures with errors.
- * @param diameterScale c, where diameters were measured.
- * @returns a problem of two parameters.
+ * The same conic with e = 1 held: φ₀ takes the place of k and h, what follows stays. For the test of the parabola.
+ * @param full a problem whose first parameters are p, k and h.
+ * @returns a problem of one parameter less.
  */
-export function parabolaProblem(points: readonly PlanePoint[], diameterScale: number | null): LeastSquaresProblem {
-  const full = planeProblem(points, diameterScale)
-  const inner = new Float64Array(3)
-  const wide = new Float64Array(3 * full.rows)
+export function parabolaProblem(full: LeastSquaresProblem): LeastSquaresProblem {
+  const inner = new Float64Array(full.parameters)
+  const wide = new Float64Array(full.parameters * full.rows)
+  const count = full.parameters - 1
   return {
-    parameters: 2,
+    parameters: count,
     rows: full.rows,
     evaluate(values, residuals, jacobian) {
       const c = cos(values[1]!)
@@ -104,11 +103,14 @@ export function parabolaProblem(points: readonly PlanePoint[], diameterScale: nu
       inner[0] = values[0]!
       inner[1] = c
       inner[2] = s
+      for (let j = 3; j <= count; j++) inner[j] = values[j - 1]!
       if (!full.evaluate(inner, residuals, jacobian ? wide : null)) return false
       if (!jacobian) return true
       for (let i = 0; i < full.rows; i++) {
-        jacobian[2 * i] = wide[3 * i]!
-        jacobian[2 * i + 1] = -s * wide[3 * i + 1]! + c * wide[3 * i + 2]!
+        const row = i * full.parameters
+        jacobian[count * i] = wide[row]!
+        jacobian[count * i + 1] = -s * wide[row + 1]! + c * wide[row + 2]!
+        for (let j = 3; j <= count; j++) jacobian[count * i + j - 1] = wide[row + j]!
       }
       return true
     },

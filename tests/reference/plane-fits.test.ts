@@ -36,6 +36,49 @@ describe('planets from mean elements, noise-free (Simon et al. 1994, A&A 282, 66
   })
 })
 
+describe('planets from mean elements with times by the mean motion of the same a (Simon et al. 1994; μ of the Sun 4π² au³ a Julian year² to 1e-5)', () => {
+  it.each([['Earth', 1.0000010178, 0.0167086342], ['Mars', 1.5236793419, 0.0934006477], ['Mercury', 0.3870983098, 0.2056317526]] as const)('gives the period and the passage of perihelion of %s back', (planet, a, e) => {
+    const rows = readFixture('checks/polar_planets_exact.csv').filter((row) => row.planet === planet)
+    const period = a ** 1.5
+    const direction = { Earth: 102.93734808, Mars: 336.06023395, Mercury: 77.45611904 }[planet]
+    const measures = rows.map((row) => {
+      const nu = (Number(row.phi_deg_heliocentric_longitude_in_orbit) - direction) * DEG
+      const anomaly = 2 * Math.atan(Math.sqrt((1 - e) / (1 + e)) * Math.tan(nu / 2))
+      return { phiRad: nu + direction * DEG, r: Number(row.r_au), epochYr: 2000 + (period * (anomaly - e * Math.sin(anomaly))) / (2 * Math.PI) }
+    })
+    const result = fitted(measures, { radiusUnit: 'au' })
+    expect(Math.abs(result.elements.period!.value / period - 1)).toBeLessThanOrEqual(1e-9)
+    const turns = (result.elements.periapsisTime!.value - 2000) / period
+    expect(Math.abs(turns - Math.round(turns))).toBeLessThanOrEqual(1e-8)
+    expect(Math.abs(result.elements.eccentricity!.value - e)).toBeLessThanOrEqual(1e-9)
+    expect(Math.abs(result.constants!.gravitationalParameter.value / (4 * Math.PI ** 2) - 1)).toBeLessThanOrEqual(1e-9)
+  })
+})
+
+describe('real distances of Mars with their dates (Bretagnon & Francou 1988, VSOP87)', () => {
+  const rows = readFixture('checks/polar_mars_vsop.csv')
+  const result = fitted(rows.map((row) => ({ phiRad: Number(row.phi_deg) * DEG, r: Number(row.r_au), epochYr: 2000 + (Number(row.jd_tdb) - 2451545) / 365.25 })), { radiusUnit: 'au' })
+
+  it('gives the sidereal period of Mars, 686.98 d, the longest of the periods that dates at equal intervals allow', () => {
+    expect(Math.abs(result.elements.period!.value * 365.25 - 686.98)).toBeLessThan(0.1)
+    expect(result.alternatives.length).toBeGreaterThan(0)
+    expect(result.alternatives.every((other) => other.elements.period!.value < result.elements.period!.value)).toBe(true)
+  })
+
+  it('gives the perihelion of 1999 November 25 to half a day, and the Sun\'s gravitational parameter to a part in 2000', () => {
+    const periodYr = result.elements.period!.value
+    const turns = (result.elements.periapsisTime!.value - 1999.9) / periodYr
+    expect(Math.abs(turns - Math.round(turns)) * periodYr).toBeLessThan(0.01)
+    expect(Math.abs(result.constants!.gravitationalParameter.value / (4 * Math.PI ** 2) - 1)).toBeLessThan(5e-4)
+  })
+
+  it('keeps e and a of the fit without times within the perturbations', () => {
+    const found = pick(result)
+    expect(Math.abs(found.e - 0.093394)).toBeLessThan(3e-4)
+    expect(Math.abs(found.a - 1.523646)).toBeLessThan(3e-4)
+  })
+})
+
 describe('real distances of Mars over one revolution (Bretagnon & Francou 1988, VSOP87; solution computed for this check)', () => {
   const rows = readFixture('checks/polar_mars_vsop.csv')
   const result = fitted(rows.map((row) => ({ phiRad: Number(row.phi_deg) * DEG, r: Number(row.r_au) })), { radiusUnit: 'au' })

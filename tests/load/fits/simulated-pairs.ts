@@ -29,6 +29,9 @@ export interface PairOptions {
   changedQuadrants?: number
 }
 
+/** The first draws of neighbouring seeds are alike; these are passed over. */
+const FIRST_DRAWS = 8
+
 const between = (range: readonly [number, number], part: number) => range[0] + (range[1] - range[0]) * part
 
 /** A, B, F, G of an orbit, arcsec. */
@@ -72,6 +75,7 @@ function drawTruth(options: PairOptions, uniform: () => number): CampbellElement
  */
 export function simulatedPair(options: PairOptions): SimulatedPair {
   const random = randomStream(options.seed)
+  for (let i = 0; i < FIRST_DRAWS; i++) random.uniform()
   const truth = drawTruth(options, random.uniform)
   const arcYr = Math.min(880, truth.periodYr * between(options.coverage, random.uniform()))
   const sigma = between(options.sigma ?? [0.005, 0.05], random.uniform())

@@ -54,7 +54,7 @@ describe('a conic in its plane', () => {
     ]
     const points = preparePlanePoints(measures, { diameterScaleArcmin: 30 })
     for (const [problem, values] of [
-      [planeProblem(points.used, points.diameterScale), [1.1, 0.2, 0.15]], [parabolaProblem(points.used, points.diameterScale), [1.1, 1.2]],
+      [planeProblem(points.used, points.diameterScale), [1.1, 0.2, 0.15]], [parabolaProblem(planeProblem(points.used, points.diameterScale)), [1.1, 1.2]],
     ] as const) {
       const residuals = new Float64Array(problem.rows)
       const jacobian = new Float64Array(problem.rows * problem.parameters)
