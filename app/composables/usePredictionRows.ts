@@ -1,4 +1,5 @@
 import type { Kind, Prediction } from '~~/fitting/types'
+import { comesNearSun, NEAR_SUN_DEG } from '#shared/drawing/near-sun'
 import { formatDirection } from '#shared/units/angles'
 import { formatJulianDay } from '#shared/units/date-text'
 import { formatNumber } from '#shared/units/number-text'
@@ -16,7 +17,6 @@ interface Column extends Heading {
   text: (prediction: Prediction) => string
 }
 
-const SUN_NEARER_THAN_DEG = 20
 
 /** A value of a prediction with fixed decimals; a dash where there is none. */
 function plain(heading: Heading, name: string, write: (value: number) => string): Column {
@@ -39,7 +39,7 @@ const DATED: Column[] = [
   plain({ key: 'error', symbol: 'σ', word: ', ″' }, 'errorMajorArcsec', value => formatNumber(value, value < 10 ? 1 : 0)),
   plain({ key: 'distance', symbol: 'Δ', word: ', au' }, 'distanceAu', value => formatNumber(value, 3)),
   plain({ key: 'sun', symbol: 'r', word: ', au' }, 'sunDistanceAu', value => formatNumber(value, 3)),
-  plain({ key: 'elongation', symbol: '', word: 'from the Sun, °' }, 'elongationDeg', value => `${formatNumber(value, 0)}${value < SUN_NEARER_THAN_DEG ? ' !' : ''}`),
+  plain({ key: 'elongation', symbol: '', word: 'from the Sun, °' }, 'elongationDeg', value => `${formatNumber(value, 0)}${value < NEAR_SUN_DEG ? ' !' : ''}`),
   plain({ key: 'motion', symbol: '', word: '″/min' }, 'motionArcsecPerMin', value => formatNumber(value, 2)),
 ]
 
@@ -65,6 +65,6 @@ export function usePredictionRows(predictions: () => readonly Prediction[], kind
   const headings = computed(() => columnsOf(kind(), radiusUnit()))
   const shown = computed(() => predictions().filter(({ values }) => values[NEEDED[kind()]] !== undefined))
   const rows = computed(() => shown.value.map(prediction => headings.value.map(column => column.text(prediction))))
-  const isNearSun = computed(() => shown.value.some(({ values }) => values.elongationDeg !== undefined && values.elongationDeg < SUN_NEARER_THAN_DEG))
+  const isNearSun = computed(() => comesNearSun(shown.value))
   return { headings, rows, isNearSun }
 }

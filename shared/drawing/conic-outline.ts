@@ -19,8 +19,9 @@ const RADIANS_PER_DEGREE = Math.PI / 180
 const CURVE_POINTS = 96
 /** How far past the nearest distance an open curve is drawn at least. */
 const OPEN_REACH = 5
-/** How far past its outermost measure an orbit about the Sun is drawn. */
-const SOLAR_OVERHANG = 1.6
+/** An orbit about the Sun is drawn to this part of its perihelion distance at least, and this far past its outermost measure. */
+const SOLAR_REACH = 2.5
+const SOLAR_OVERHANG = 1.5
 /** How much a line is drawn on past its outermost measures, as a part of its length. */
 const LINE_OVERHANG = 0.15
 
@@ -89,7 +90,7 @@ function solarConic({ conic, residuals }: FitResult): ConicOutline | null {
   const e = conic?.eccentricity.value
   if (p === undefined || e === undefined || !(p > 0) || !Number.isFinite(e)) return null
   const outermost = residuals.reduce((largest, { computed }) => Math.max(largest, computed.sunDistanceAu ?? 0), 0)
-  const reach = Math.max(OPEN_REACH * p / (1 + e), SOLAR_OVERHANG * outermost)
+  const reach = Math.max(SOLAR_REACH * p / (1 + e), SOLAR_OVERHANG * outermost)
   const at = (trueAnomalyRad: number): Point => {
     const r = p / (1 + e * Math.cos(trueAnomalyRad))
     return { x: r * Math.cos(trueAnomalyRad), y: r * Math.sin(trueAnomalyRad) }

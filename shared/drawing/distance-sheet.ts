@@ -3,7 +3,7 @@ import type { Prediction } from '../../fitting/types'
 import { formatJulianDay } from '../units/date-text'
 import { markedDays, type TrackSpan } from './track-dates'
 
-export const DISTANCE_SHEET = { widthPx: 560, heightPx: 190, left: 50, right: 74, top: 12, bottom: 26 } as const
+export const DISTANCE_SHEET = { widthPx: 560, heightPx: 190, left: 50, right: 86, top: 12, bottom: 26 } as const
 const LABEL_GAP_PX = 16
 
 interface DrawnCurve {

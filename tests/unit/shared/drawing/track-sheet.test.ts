@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { comesNearSun } from '../../../../shared/drawing/near-sun'
 import { graticule } from '../../../../shared/drawing/sky-graticule'
 import { middleOf, skyProjection } from '../../../../shared/drawing/sky-projection'
 import { SKY_SHEET_PX } from '../../../../shared/drawing/sky-sheet'
@@ -75,5 +76,14 @@ describe('the dates of a drawing', () => {
   it('are marked at round days, few enough to be read', () => {
     expect(markedDays(2461100.2, 2461104.9)).toEqual([2461100.5, 2461101.5, 2461102.5, 2461103.5, 2461104.5])
     expect(markedDays(2461000, 2461365).length).toBeLessThanOrEqual(10)
+  })
+})
+
+describe('a place near the Sun', () => {
+  it('is one within 20°, wherever along the path', () => {
+    const at = (elongationDeg: number) => ({ ...prediction(2461100, 1, 1), values: { elongationDeg } })
+    expect(comesNearSun([at(88), at(19.9), at(30)])).toBe(true)
+    expect(comesNearSun([at(88), at(20)])).toBe(false)
+    expect(comesNearSun([prediction(2461100, 1, 1)])).toBe(false)
   })
 })
