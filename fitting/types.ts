@@ -59,6 +59,8 @@ export interface RelativeMeasure extends MeasureBase {
   nights?: number
   /** How it was measured, compared for equality only: errors by observer are errors by observer and method. */
   method?: string
+  /** Equinox of the position angle (or of north and east), Julian year; 2000 for ICRS and J2000, the epoch itself for of-date. */
+  thetaEquinoxYr?: number
 }
 
 export interface PlaneMeasure extends MeasureBase {
@@ -110,7 +112,10 @@ export interface FitSettings {
   conicClass?: 'any' | 'ellipse' | 'parabola' | 'circle'
   forces?: 'sun' | 'planets'
   normalPoints?: boolean
+  /** Relative: equinox to which position angles are brought, Julian year; left out, they are taken as they stand. */
   thetaEquinox?: number
+  /** Relative: where the pair stands at J2000.0; needed to bring position angles to another equinox. */
+  targetPosition?: { rightAscensionRad: number; declinationRad: number }
   /** Relative: what the reference point of the measures may do against the focus; default 'none'. */
   frameOffset?: 'none' | 'offset' | 'offset-and-drift'
   shortestPeriodYr?: number

@@ -2,6 +2,7 @@
 import { exp } from '../elementary'
 import { relativeForm, type RelativeForm } from '../models/relative-form'
 import { RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
+import { atOneEquinox } from '../models/theta-equinox'
 import { effectiveRows, prepareSkyMeasures, rowsOf, SMALLEST_RHO_ARCSEC, type SkyMeasure, type SkyMeasures } from '../models/sky-measure'
 import { searchRelative, type SearchRequest } from '../search/blind-search'
 import { withNormalPoints } from '../search/normal-points'
@@ -17,6 +18,7 @@ import { judgeRelative } from './judge-relative'
 import { settleByObserver } from './observer-errors'
 import type { Report } from './progress'
 import { refuse } from './refusal'
+import { refuseUnplaced, validateEquinoxes } from './validate-equinox'
 import { heldOfRelative } from './validate-held'
 import { validateRelative } from './validate-measures'
 
@@ -140,6 +142,14 @@ function throughNormalPoints(form: RelativeForm, fit: RobustlySettled): Robustly
  */
 export function fitRelative(request: RelativeRequest): FitResult {
   validateRelative(request.measures)
+  validateEquinoxes(request.measures, request.settings)
+  const { measures, unplaced, sentences } = atOneEquinox(request.measures, request.settings)
+  refuseUnplaced(unplaced)
+  const result = fitAtOneEquinox({ ...request, measures })
+  return { ...result, warnings: [...result.warnings, ...sentences] }
+}
+
+function fitAtOneEquinox(request: RelativeRequest): FitResult {
   const held = heldOfRelative(request.settings)
   const prepared = prepareSkyMeasures(request.measures, request.settings)
   request.report('reading', 1)
