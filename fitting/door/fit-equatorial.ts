@@ -76,9 +76,9 @@ function refuseEarthBound(settled: SettledSights): void {
 }
 
 /** Settles, sizes equal errors by the residuals, and lets the clocks' errors act; as often as that asks for. */
-function settleAll(sightings: Sightings, states: DatedState[], options: SettleOptions): SettledSights[] {
+function withFinalErrors(sightings: Sightings, provisional: SettledSights[], options: SettleOptions): SettledSights[] {
   const reference = middleReference(sightings.used)
-  let settled = settleSights(sightings.used, states, reference, options)
+  let settled = provisional
   if (settled.length === 0) return settled
   const degrees = 2 * sightings.used.length - settled[0]!.orbit.map.parameters
   const factor = degrees > 0 ? Math.sqrt(settled[0]!.solution.chiSquare / degrees) : 0
@@ -127,7 +127,10 @@ export function fitEquatorial(request: EquatorialRequest): FitResult {
   report('polishing', 0.3)
   // Over a long arc the planets' pull would lead the Sun's conic astray: there the states of the search are better starts.
   const isNear = sunSettled.length > 0 && (forces === 'sun' || days <= WHOLE_ARC_DAYS)
-  const settled = settleAll(sightings, isNear ? sunSettled.map(stateOf) : states, { forces, isParabola })
+  const options: SettleOptions = { forces, isParabola }
+  const provisional = isNear && forces === 'sun' && !isParabola ? sunSettled
+    : settleSights(used, isNear ? sunSettled.map(stateOf) : states, middleReference(used), options)
+  const settled = withFinalErrors(sightings, provisional, options)
   if (settled.length === 0) refuse('no-orbit-found', 'No orbit about the Sun passes near these directions.', 'Check times, positions and stations; leave doubtful measures out.')
   refuseEarthBound(settled[0]!)
   report('polishing', 1)

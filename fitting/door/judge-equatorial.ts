@@ -34,7 +34,7 @@ export interface EquatorialJudgement {
 const ALTERNATIVE_WITHIN = 9
 const ALTERNATIVES_AT_MOST = 8
 /** With e this many σ from 1 a parabola is out of the question, and none is fitted. */
-const PARABOLA_WITHIN_SIGMA = 30
+const PARABOLA_WITHIN_SIGMA = 8
 /** χ² below this passes through every measure. */
 const EXACT_BELOW = 1e-6
 

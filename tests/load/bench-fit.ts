@@ -4,7 +4,8 @@
  * Without a section all run. Times are processor time of one process, which other work on the machine disturbs less than the clock.
  */
 import { parseArgs } from 'node:util'
-import { bytes, equatorial, kepler, planets } from './fits/engine-sections'
+import { bytes, kepler } from './fits/engine-sections'
+import { equatorial, planets } from './fits/equatorial-sections'
 import { merging, robust, straight } from './fits/judgement-sections'
 import { plane } from './fits/plane-sections'
 import { blind, degenerate, refit, shortPeriods } from './fits/relative-sections'

@@ -1,63 +1,11 @@
-/** Comets and minor planets, Kepler's equation, and the same bytes twice. */
+/** Kepler's equation, and the same bytes twice. */
 import { fitOrbit } from '../../../fitting'
 import { solveKeplerInto } from '../../../fitting/conic/kepler'
 import { randomStream } from '../../../fitting/random'
-import { ORBIT_CLASSES, simulatedSightings } from '../../builders/simulated-sightings'
 import { simulatedPair } from './simulated-pairs'
-import { median, notServed, timed, type Row, type Section } from './table'
+import { median, timed, type Section } from './table'
 
-/** Right: 24 rows and six unknowns leave 18 degrees of freedom, above 40 by chance in 0.2 % of cases. */
-const LARGEST_CHI_SQUARE = 40
 const KEPLER_SOLVES = 200_000
-const SIGHTINGS = 12
-
-function sightingRow(systems: number, seed: number): Row {
-  const count = Math.max(1, Math.round(systems / ORBIT_CLASSES.length)) * ORBIT_CLASSES.length
-  let right = 0
-  const ms: number[] = []
-  for (let i = 1; i <= count; i++) {
-    const { measures } = simulatedSightings({ seed: seed + i, orbitClass: ORBIT_CLASSES[i % ORBIT_CLASSES.length]!, count: SIGHTINGS })
-    const fit = timed(() => fitOrbit({ kind: 'equatorial', measures, settings: { forces: 'sun' } }))
-    ms.push(fit.ms)
-    if (fit.value.ok && fit.value.result.statistics.chiSquare < LARGEST_CHI_SQUARE) right++
-  }
-  return {
-    what: `equatorial, blind, 12 measures of 0.5″ over 5–120 d, five classes, ${count} cases`, reach: 'at least 1,490 of 1,500 right',
-    measured: `${right} of ${count} with χ² below ${LARGEST_CHI_SQUARE} at 18 degrees of freedom (0.2 % are above by chance), median ${median(ms).toFixed(0)} ms`, met: right >= count * 1490 / 1500,
-  }
-}
-
-function refitRow(systems: number, seed: number): Row {
-  const ms: number[] = []
-  for (let i = 0; i <= Math.min(40, systems); i++) {
-    const { measures } = simulatedSightings({ seed: seed + i, orbitClass: 'main belt', count: 50 })
-    const fit = fitOrbit({ kind: 'equatorial', measures, settings: { forces: 'sun' } })
-    if (!fit.ok) continue
-    const again = timed(() => fitOrbit({ kind: 'equatorial', measures, settings: { forces: 'sun' }, start: { state: fit.result.state } }))
-    if (i > 0) ms.push(again.ms)
-  }
-  const ours = median(ms)
-  return { what: 'equatorial, refit at N = 50, the Sun only', reach: 'under 2 ms', measured: `median ${ours.toFixed(2)} ms of the whole door (observers, errors, residuals with it)`, met: ours < 2 }
-}
-
-/** Orbits about the Sun from nothing, and again from their own state. */
-export const equatorial: Section = ({ systems, seed }) => [sightingRow(systems, seed), refitRow(systems, seed)]
-
-/** A year with the planets, refitted. */
-export const planets: Section = ({ systems, seed }) => {
-  const ms: number[] = []
-  for (let i = 0; i <= Math.min(5, systems); i++) {
-    const { measures } = simulatedSightings({ seed: seed + i, orbitClass: 'main belt', count: 50, arcDays: [150, 200] })
-    const fit = fitOrbit({ kind: 'equatorial', measures, settings: { forces: 'planets' } })
-    if (!fit.ok) continue
-    const again = timed(() => fitOrbit({ kind: 'equatorial', measures, settings: { forces: 'planets' }, start: { state: fit.result.state } }))
-    if (i > 0) ms.push(again.ms)
-  }
-  return [
-    { what: 'equatorial with the planets, refit at N = 50 over 150–200 d', reach: 'under 100 ms over a year', measured: `median ${median(ms).toFixed(0)} ms of the whole door`, met: median(ms) < 100 },
-    notServed('a year with the planets against a tight integration in SciPy', 'held to 0.01″', 'not measured by this benchmark yet'),
-  ]
-}
 
 /** One solve of Kepler's equation with portable sine and cosine. */
 export const kepler: Section = ({ seed }) => {
