@@ -125,6 +125,8 @@ export interface FitSettings {
   /** Plane: name of the unit of r, for units in the result; default 'unit'. */
   radiusUnit?: string
   seed?: number
+  /** 'profile': profile intervals always; 'linear': never; left out: where the linearised errors do not hold. Relative only. */
+  errors?: 'linear' | 'profile'
 }
 
 /** An earlier result's regular parameters, to refit from instead of searching blind. */
@@ -322,6 +324,14 @@ export interface FitStatistics {
   byObserver: { observer: string; measures: number; rms: Record<string, number>; bias: Record<string, number> }[]
 }
 
+/** Ends of profile intervals of 68.27 and 95 %, in the element's unit; null where the measures do not bound the element on that side. */
+export interface ProfileInterval {
+  low68: number | null
+  high68: number | null
+  low95: number | null
+  high95: number | null
+}
+
 export interface FitResult {
   format: 1
   kind: Kind
@@ -340,6 +350,8 @@ export interface FitResult {
   /** equatorial: over which arc the motion fitted is honest. */
   honestArc?: HonestArc
   covariance: { names: string[]; matrix: number[][] } | null
+  /** Profile intervals by element, where asked for or where the linearised errors do not hold. */
+  profile?: Record<string, ProfileInterval>
   constants: Constants | null
   statistics: FitStatistics
   residuals: Residual[]

@@ -3,6 +3,7 @@ import type { Held } from '../models/held-orbit'
 import type { RelativeForm } from '../models/relative-form'
 import { LARGEST_S, RELATIVE_KEPLER_NAMES } from '../models/relative-kepler'
 import { aboutNights } from '../models/nights'
+import { skyProblem } from '../models/relative-problem'
 import { effectiveRows, type SkyMeasures } from '../models/sky-measure'
 import { isSameMinimum } from '../search/polish'
 import type { SettledPath } from '../search/settle-path'
@@ -10,24 +11,20 @@ import { covarianceOf } from '../solve/covariance'
 import type { Alternative, Element, FitResult, FitSettings, FitStatistics, NormalPoint, ObserverError } from '../types'
 import { elementOf, errorScale, quadraticForm } from '../uncertainty/error-scale'
 import { aboutFrame, frameElements, frameShift } from '../uncertainty/frame-elements'
+import { aboutNormalPoints } from '../uncertainty/about-normal-points'
 import { aboutHeld, markHeld, withHeldQuantities } from '../uncertainty/held-elements'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { ELEMENT_NAMES, relativeElements, type RelativeElements } from '../uncertainty/relative-elements'
 import { carryBackOf, combinedAngle, relativeArc, relativeConic, relativeConstants, type Errors } from '../uncertainty/relative-motion'
 import { proposalsOf } from '../uncertainty/proposals'
+import { profileRoots } from '../uncertainty/profile'
+import { isProfileDue, relativeProfile } from '../uncertainty/relative-profile'
 import { relativeWarnings } from '../uncertainty/relative-warnings'
 import { skyResidual, type SkyResidualContext } from '../uncertainty/sky-residuals'
 import { straightnessOf } from '../uncertainty/straightness'
 import { ENGINE_VERSION } from '../version'
 import { estimatedSigma } from './estimated-errors'
 import { stopSentence } from './stop-sentence'
-
-/** What to say about normal points. */
-function aboutNormalPoints(points: readonly NormalPoint[] | undefined, places: number): string[] {
-  if (points === undefined) return []
-  const members = points.reduce((sum, point) => sum + point.members.length, 0)
-  return [`${members} measures stand in ${points.length} normal points of at most a fiftieth of the period; χ² and degrees of freedom are those of ${places} places, residuals those of the measures.`]
-}
 
 /** Coordinates whose scatter is reported. */
 export const SKY_UNITS = {
@@ -135,6 +132,15 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; r
   }
 }
 
+/** Profile intervals where they are due; of orbits with all seven parameters free. */
+function profileOf(judgement: Judgement, errors: SolutionErrors, elements: RelativeElements, published: Record<string, Element>): FitResult['profile'] {
+  const { solutions, form, settings, referenceEpochYr, measures } = judgement
+  const { solution, rows } = solutions[0]!
+  const roots = profileRoots(errors.scale, effectiveRows(measures.used) - solution.values.length)
+  if (!form.isRegular || errors.covariance === null || roots === null || !isProfileDue(settings.errors, solution.residuals.length, published.period, errors.conditionNumber)) return undefined
+  return relativeProfile({ ...solution, problem: skyProblem(form.path, rows), covariance: errors.covariance, roots }, elements, referenceEpochYr)
+}
+
 /**
  * Judges a relative fit.
  * @param judgement solutions best first, measures with their errors, reference epoch (Julian year).
@@ -169,6 +175,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
   const isAtLimit = form.held.eccentricity === undefined && regular[1]! * regular[1]! + regular[2]! * regular[2]! > 0.95 * LARGEST_S * LARGEST_S
   const isShortArc = isAtLimit || (statistics.arc.turns ?? 0) < SHORT_ARC_TURNS
   const straightness = isShortArc && form.frame === 'none' ? straightnessOf(measures, referenceEpochYr) : undefined
+  const profile = profileOf(judgement, errors, elements, published)
   return {
     format: 1,
     kind: 'relative',
@@ -180,6 +187,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     nodeStatus: 'ambiguous',
     nodeEquinox: settings.thetaEquinox ?? 2000,
     covariance: elementCovariance(elements, errors),
+    ...(profile === undefined ? {} : { profile }),
     constants: relativeConstants(elements, errors, used.map((measure) => measure.epochYr)),
     statistics,
     residuals,
@@ -187,7 +195,7 @@ export function judgeRelative(judgement: Judgement): FitResult {
     alternatives,
     proposals: settings.loss === 'biweight' ? proposalsOf(measures.used, residuals, context) : [],
     warnings: [
-      ...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, straightness }),
+      ...relativeWarnings({ elements, published, errors, conic, statistics, residuals, alternatives, isAtLimit, hasProfile: profile !== undefined, straightness }),
       ...aboutHeld(form.held), ...aboutFrame(form.frame, referenceEpochYr), ...aboutNights(measures.countedNights), ...aboutNormalPoints(judgement.normalPoints, used.length),
     ],
     state: {

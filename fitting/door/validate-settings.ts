@@ -11,14 +11,14 @@ const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
 
 /** Settings that have a meaning, by kind. */
 const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
-  relative: ['model', 'loss', 'weights', 'hold', 'frameOffset', 'targetPosition', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  relative: ['model', 'loss', 'weights', 'hold', 'frameOffset', 'targetPosition', 'errors', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   plane: ['model', 'loss', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   equatorial: ['model', 'loss', 'weights', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
 }
 
 const CHOICES: Partial<Record<keyof FitSettings, readonly unknown[]>> = {
   model: ['kepler', 'line', 'still'], loss: ['squares', 'huber', 'biweight'], weights: ['stated', 'equal', 'by-observer'],
-  conicClass: ['any', 'ellipse', 'parabola', 'circle'], frameOffset: ['none', 'offset', 'offset-and-drift'], forces: ['sun', 'planets'], normalPoints: [true, false],
+  errors: ['linear', 'profile'], conicClass: ['any', 'ellipse', 'parabola', 'circle'], frameOffset: ['none', 'offset', 'offset-and-drift'], forces: ['sun', 'planets'], normalPoints: [true, false],
 }
 
 /** Finite number above the lower bound and up to the upper. */

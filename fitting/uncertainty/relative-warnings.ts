@@ -3,10 +3,9 @@ import { cos } from '../elementary'
 import type { Alternative, Conic, Element, FitStatistics, Residual } from '../types'
 import type { RelativeElements } from './relative-elements'
 import { combinedAngle, EDGE_ON_BELOW, type Errors } from './relative-motion'
+import { isWeaklyDetermined } from './relative-profile'
 import type { Straightness } from './straightness'
 
-const POORLY_KNOWN_PERIOD = 0.1
-const HIGH_CONDITION = 1e4
 const LONG_PERIOD_SPANS = 12
 const LARGE_SCATTER = 2
 const OUTLIER_SIGMA = 6
@@ -25,6 +24,8 @@ export interface RelativeFindings {
   alternatives: Alternative[]
   /** |(u, v)| met its limit. */
   isAtLimit: boolean
+  /** Profile intervals stand in the result. */
+  hasProfile: boolean
   /** Test of straight motion; null where it could not be made, left out where the arc is long. */
   straightness?: Straightness | null
 }
@@ -61,17 +62,17 @@ function aboutStraightness(straightness: Straightness | null | undefined): strin
   return [`The motion so far is straight: curvature towards the primary is ${round(kappa / sigma, 1)} times its error. Publish the straight line, not this orbit.`]
 }
 
-function aboutArc({ elements, published, statistics, isAtLimit, straightness }: RelativeFindings): string[] {
+function aboutArc({ published, statistics, isAtLimit, straightness, hasProfile }: RelativeFindings): string[] {
   const warnings: string[] = aboutStraightness(straightness)
   const turns = statistics.arc.turns ?? 0
   if (turns < 0.5) warnings.push(`The measures cover ${round(100 * turns, 0)} % of one period: elements of so short an arc change much with every new measure.`)
   if (turns * LONG_PERIOD_SPANS < 1 || isAtLimit) {
     warnings.push('The arc is too short to bound the orbit (period beyond 12 spans, or eccentricity at the limit of 0.9999): compare with straight motion before publishing an orbit.')
   }
-  const sigmaPeriod = published.period?.sigma ?? null
   const condition = statistics.conditionNumber
-  if ((sigmaPeriod !== null && sigmaPeriod / elements.periodYr > POORLY_KNOWN_PERIOD) || (condition !== null && condition > HIGH_CONDITION)) {
-    warnings.push('The errors given are those of a linearised fit; on so weakly determined an orbit they are too small or too symmetric.')
+  if (isWeaklyDetermined(published.period, condition)) {
+    warnings.push(hasProfile ? 'On so weakly determined an orbit the linearised errors are too small or too symmetric: go by the profile intervals.'
+      : 'The errors given are those of a linearised fit; on so weakly determined an orbit they are too small or too symmetric.')
   }
   if (condition === null) warnings.push('The measures do not determine all elements: no errors can be given.')
   return warnings

@@ -6,6 +6,7 @@
 import { parseArgs } from 'node:util'
 import { bytes, kepler } from './fits/engine-sections'
 import { equatorial, planets } from './fits/equatorial-sections'
+import { coverage } from './fits/coverage-section'
 import { merging, robust, straight } from './fits/judgement-sections'
 import { plane } from './fits/plane-sections'
 import { blind, degenerate, refit, shortPeriods } from './fits/relative-sections'
@@ -13,7 +14,7 @@ import { scipyVersion } from './fits/scipy'
 import { print, type Section } from './fits/table'
 
 const SECTIONS: Record<string, Section> = {
-  blind, 'short-periods': shortPeriods, refit, degenerate, robust, straight, equatorial, planets, plane, kepler, merging, bytes,
+  blind, 'short-periods': shortPeriods, refit, degenerate, robust, straight, coverage, equatorial, planets, plane, kepler, merging, bytes,
 }
 
 const { values, positionals } = parseArgs({ allowPositionals: true, options: { systems: { type: 'string', default: '300' }, seed: { type: 'string', default: '1' } } })
