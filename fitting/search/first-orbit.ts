@@ -110,21 +110,18 @@ export function settleDistinct(problem: ReturnType<typeof sightProblem>, starts:
  * Orbits from nothing.
  * @param sights used, in order of time, at least three times apart.
  * @param reference line of sight and Earth at the epoch of the parameters.
- * @param onProgress part done, 0 … 1.
  * @returns settled orbits, best first; none where no candidate is defined.
  * Source: as gauss-angles.ts and end-distances.ts.
  */
-export function searchFirstOrbits(sights: readonly Sight[], reference: SightReference, onProgress: (part: number) => void = () => {}): Solution[] {
+export function searchFirstOrbits(sights: readonly Sight[], reference: SightReference): Solution[] {
   const few = thinned(sights, THINNED_TO)
   const epoch = reference.jdTt
   const grid = searchEndDistances(few, few.length === 3 ? GRID_CANDIDATES_FOR_THREE : GRID_CANDIDATES).map((candidate) => stateAt(candidate.state, candidate.jdTt, epoch)).filter((state) => state !== null)
-  onProgress(0.4)
   const states = [...statesByGauss(few, epoch), ...grid]
   const starts = states.map((state) => sightOfState(reference, state)).filter((values) => values.every((value) => value - value === 0))
   const map = sightMap(reference)
   const motion = sunMotion(epoch)
   const polished = settleDistinct(sightProblem(few, map, motion), starts, FIRST_POLISH)
-  onProgress(0.9)
   const limit = few.length < sights.length ? WORTH_FOLLOWING.times * (polished[0]?.chiSquare ?? 0) + WORTH_FOLLOWING.plus : Infinity
   const followed = polished.slice(0, sights.length === 3 ? polished.length : FOLLOWED).filter(({ chiSquare }) => chiSquare <= limit).map(({ values }) => values)
   return settleDistinct(sightProblem(sights, map, motion), followed, 200)

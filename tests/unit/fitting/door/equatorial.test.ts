@@ -210,3 +210,20 @@ describe('a refit', () => {
     }
   })
 })
+
+describe('measures of several oppositions', () => {
+  it('are linked without a starting guess, with the planets', () => {
+    const orbit = { perihelionDistanceAu: 2.2, eccentricity: 0.12, inclinationRad: 9 * DEG, nodeRad: 2, argumentOfPerihelionRad: 1, perihelionTimeJdTt: 2455300 }
+    const epochJdTt = 2455000.5
+    const truth = stateOfElements(orbit, epochJdTt, 'planets')
+    const times = Array.from({ length: 150 }, (_, i) => epochJdTt - 600 + 8 * i)
+    const seen = predict({ kind: 'equatorial', state: truth }, times).filter(({ values }) => values.elongationDeg! > 140)
+    const measures = seen.map(({ at, values }, i): EquatorialMeasure => ({
+      id: `m${i}`, observer: 'Tasque', site: { longitudeEastDeg: 0, rhoCosPhi: 0, rhoSinPhi: 0 }, jdUtc: at - 66.184 / 86400, raRad: values.raDeg! * DEG, decRad: values.decDeg! * DEG, sigmaRaCosDecArcsec: 0.5, sigmaDecArcsec: 0.5,
+    }))
+    expect(measures.at(-1)!.jdUtc - measures[0]!.jdUtc).toBeGreaterThan(500)
+    const result = fitted(measures, {})
+    expect(result.statistics.chiSquare).toBeLessThan(0.01)
+    expect(result.statistics.arc.turns!).toBeGreaterThan(0.3)
+  })
+})
