@@ -39,6 +39,8 @@ const EQUATORIAL: ElementLabel[] = [
   { name: 'semiMajorAxis', symbol: 'a', word: 'semi-major axis' },
   { name: 'meanAnomaly', symbol: 'M', word: 'mean anomaly' },
   { name: 'meanMotion', symbol: 'n', word: 'mean motion' },
+  { name: 'absoluteMagnitude', symbol: 'H', word: 'absolute magnitude' },
+  { name: 'totalMagnitude', symbol: 'M₁', word: 'total magnitude at 1 au' },
 ]
 
 const LINE: ElementLabel[] = [

@@ -63,15 +63,17 @@ export function withUnit(text: string, unit: string): string {
 }
 
 /**
- * Writes an element for a table: of a Julian date the year and month go to the words, the day with its decimals stays a number.
+ * Writes an element for a table, whose column of units is narrow: of a Julian date the year and month, of a magnitude the passband
+ * go to the words, so that a number and a short unit stay.
  * @param element value and error to publish, with their unit
- * @returns value and σ with the same decimals, the sign of the unit, and what goes before the value in words:
- * "12.314", "0.021", "d" and "2026 Apr"; empty words for any other unit
+ * @returns value and σ with the same decimals, the sign of the unit, and what is added to the words:
+ * "12.314", "0.021", "d" and "2026 Apr"; no addition for any other unit
  */
-export function elementCells(element: Element): ValueAndSigma & { unit: string, month: string } {
+export function elementCells(element: Element): ValueAndSigma & { unit: string, addition: string } {
   const { value, sigma } = formatValueAndSigma(element.value, element.sigma)
-  if (element.unit !== 'JD TT') return { value, sigma, unit: unitSymbol(element.unit), month: '' }
+  if (element.unit.startsWith('mag ')) return { value, sigma, unit: 'mag', addition: element.unit.slice('mag '.length) }
+  if (element.unit !== 'JD TT') return { value, sigma, unit: unitSymbol(element.unit), addition: '' }
   const decimals = Math.min(6, Math.max(0, decimalsForSigma(element.sigma) ?? 2))
   const [year = '', month = '', day = ''] = formatJulianDate(element.value, decimals).split(' ')
-  return { value: day, sigma, unit: 'd', month: `${year} ${month}` }
+  return { value: day, sigma, unit: 'd', addition: `${year} ${month}` }
 }

@@ -99,9 +99,10 @@ describe('sizes and lists', () => {
 })
 
 describe('an element in a table', () => {
-  it('has a time of perihelion as a day with its decimals, the month in words', () => {
-    expect(elementCells(element(2461142.81436, 0.021, 'JD TT'))).toEqual({ value: '12.314', sigma: '0.021', unit: 'd', month: '2026 Apr' })
-    expect(elementCells(element(2461142.81436, null, 'JD TT'))).toEqual({ value: '12.31', sigma: null, unit: 'd', month: '2026 Apr' })
-    expect(elementCells(element(64.21, 0.03, 'deg'))).toEqual({ value: '64.210', sigma: '0.030', unit: '°', month: '' })
+  it('has a time of perihelion as a day with its decimals and a magnitude without its band: month and band go to the words', () => {
+    expect(elementCells(element(2461142.81436, 0.021, 'JD TT'))).toEqual({ value: '12.314', sigma: '0.021', unit: 'd', addition: '2026 Apr' })
+    expect(elementCells(element(2461142.81436, null, 'JD TT'))).toEqual({ value: '12.31', sigma: null, unit: 'd', addition: '2026 Apr' })
+    expect(elementCells(element(9.192, 0.017, 'mag G'))).toEqual({ value: '9.192', sigma: '0.017', unit: 'mag', addition: 'G' })
+    expect(elementCells(element(64.21, 0.03, 'deg'))).toEqual({ value: '64.210', sigma: '0.030', unit: '°', addition: '' })
   })
 })
