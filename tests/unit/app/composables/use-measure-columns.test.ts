@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { MeasureView } from '#shared/schemas/targets'
 import { useMeasureColumns } from '../../../../app/composables/useMeasureColumns'
-import { pairResult, residual } from '../../../builders/fit-result'
+import { pairResult, residual, solarResult } from '../../../builders/fit-result'
 
 const EMPTY: MeasureView = {
   id: '', observer: 'T. Orrowin', batchNumber: 1, epochYr: null, timeUtc: null, thetaDeg: null, rhoArcsec: null, rhoLimitArcsec: null,
@@ -26,6 +26,16 @@ describe('the table of measures', () => {
     const result = pairResult({}, { residuals: [residual('a', { thetaDeg: 40, rhoArcsec: 0.5 }, { observedMinusComputed: { thetaDeg: -1.254, rhoArcsec: 0.0123 }, normalised: 1.26 })] })
     const [row] = useMeasureColumns(() => [pair('a', 2001.5, 40, 0.512)], () => result).rows.value
     expect(row!.cells).toEqual(['2001.500', '40.00', '0.512', '−1.25', '+12', '1.3', 'T. Orrowin'])
+  })
+
+  it('gives a comet by time, place and residuals in both coordinates and along its motion', () => {
+    const site = { longitudeEastDeg: -2.52, latitudeDeg: 53.63, heightM: 500 }
+    const sky = { raDeg: 41.708625, decDeg: -0.2159722, sigmaRaCosDecArcsec: 0.5, sigmaDecArcsec: 0.5, correlation: null, sigmaTimeS: null, station: 'Winter Hill', site, starCatalogue: null, tracklet: null, mag: 12.14, band: 'G' }
+    const seen: MeasureView = { ...EMPTY, id: 'a', epochYr: 2026.2, timeUtc: '2026-03-14T20:51:07.500Z', sky }
+    const observedMinusComputed = { raCosDecArcsec: 0.5, decArcsec: -0.25, alongArcsec: 0.1, acrossArcsec: 0.55, sunwardArcsec: 0 }
+    const { columns, rows } = useMeasureColumns(() => [seen], () => solarResult({}, { residuals: [residual('a', {}, { observedMinusComputed, normalised: 1.2 })] }))
+    expect(columns.value.map(column => column.key)).toEqual(['time', 'ra', 'dec', 'mag', 'oc-ra', 'oc-dec', 'oc-along', 'oc-across', 'sigmas', 'observer', 'station'])
+    expect(rows.value[0]!.cells).toEqual(['2026-03-14 20:51:08', '02 46 50.07', '−00 12 57.5', '12.1', '+0.50', '−0.25', '+0.10', '+0.55', '1.2', 'T. Orrowin', 'Winter Hill'])
   })
 
   it('stands in the order of time, and turns round on a second press', () => {
