@@ -7,9 +7,11 @@ import { isInsideDomain, type LeastSquaresProblem } from '../solve/least-squares
 import { solveLeastSquares, type Solution } from '../solve/levenberg-marquardt'
 import type { FitResult, FitSettings, FitStart, PlaneMeasure } from '../types'
 import { hasMotion, middleEpoch, solvePlaneMotion } from './fit-plane-motion'
+import { planeCovariance, solveHeldPlane } from './hold-plane'
 import { judgePlane } from './judge-plane'
 import type { Report } from './progress'
 import { refuse } from './refusal'
+import { heldOfPlane } from './validate-held'
 import { validatePlane } from './validate-measures'
 
 export interface PlaneRequest {
@@ -98,18 +100,25 @@ export function fitPlane(request: PlaneRequest): FitResult {
   validatePlane(measures)
   const prepared = preparePlanePoints(measures, settings)
   checkEnough(prepared, settings)
+  const held = heldOfPlane(settings)
+  const isHeld = Object.keys(held).length > 0
+  if (isHeld && hasMotion(prepared.used)) refuse('setting-not-available', 'Elements are held, and classes of conics asked for, in fits without times only.', 'Leave the times out to hold elements of the shape.')
   report('reading', 1)
-  const { solutions: found, problemOf, referenceEpochYr } = solve(prepared, request)
+  const { solutions: freely, problemOf, referenceEpochYr } = solve(prepared, request)
+  const found = isHeld ? [solveHeldPlane(prepared, problemOf(prepared), held, freely[0]!.values)] : freely
   report('polishing', 1)
   const [first] = found as [Solution]
-  const degrees = first.residuals.length - first.values.length
+  const degrees = first.residuals.length - planeCovariance(first, held).free
   const factor = degrees > 0 ? Math.sqrt(first.chiSquare / degrees) : 0
   const isEstimated = prepared.basis === 'scaled' && factor > 1e-9
   const points = isEstimated ? rescalePlanePoints(prepared, factor) : prepared
   const problem = problemOf(points)
-  const [solution, ...others] = isEstimated ? found.map(({ values }) => solveLeastSquares(problem, values)) : found
+  const [solution, ...others] = isEstimated ? found.map(({ values }) => (isHeld ? solveHeldPlane(points, problem, held, values) : solveLeastSquares(problem, values))) : found
   if (!(hypot(solution!.values[1]!, solution!.values[2]!) < 1e6)) refuse('no-orbit-found', 'The distances fit no conic about this focus.', 'Check units and directions of the measures.')
-  const result = judgePlane({ points, solution: solution!, others, settings, referenceEpochYr, parabolaChiSquare: parabolaChiSquare(problem, solution!) })
+  if (settings.conicClass === 'ellipse' && !(hypot(solution!.values[1]!, solution!.values[2]!) < 1)) {
+    refuse('no-orbit-found', 'An ellipse was asked for, but the measures fit an unbound conic best: among ellipses there is no best one.', 'Ask for a parabola, or for any conic.')
+  }
+  const result = judgePlane({ points, solution: solution!, others, held, settings, referenceEpochYr, parabolaChiSquare: isHeld ? null : parabolaChiSquare(problem, solution!) })
   report('judging', 1)
   return result
 }

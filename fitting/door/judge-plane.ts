@@ -1,13 +1,15 @@
 /** From the solution of a conic in its plane to its result. */
 import { atan2, hypot, RAD } from '../elementary'
 import { withinTurn } from '../conic/thiele-innes'
+import type { PlaneHeld } from '../models/held-plane'
 import { PLANE_NAMES } from '../models/plane'
 import { PLANE_MOTION_NAMES } from '../models/plane-motion'
 import type { PlanePoint, PlanePoints } from '../models/plane-measure'
 import { covarianceOf } from '../solve/covariance'
 import type { Solution } from '../solve/levenberg-marquardt'
-import type { Alternative, FitResult, FitSettings, FitStatistics } from '../types'
+import type { Alternative, Conic, FitResult, FitSettings, FitStatistics } from '../types'
 import { elementOf, errorScale, quadraticForm, type Quantity } from '../uncertainty/error-scale'
+import { aboutHeld, markHeld } from '../uncertainty/held-elements'
 import { rmsByCoordinate, statisticsByObserver } from '../uncertainty/observer-statistics'
 import { planeConic } from '../uncertainty/plane-conic'
 import { arealLawOf, planeConstants, planeTimeQuantities, type PlaneMotionContext } from '../uncertainty/plane-motion-elements'
@@ -15,6 +17,7 @@ import { planeResidual, widened, type PointContext } from '../uncertainty/plane-
 import { planeWarnings } from '../uncertainty/plane-warnings'
 import { ENGINE_VERSION } from '../version'
 import { estimatedPlaneSigma } from './estimated-errors'
+import { planeCovariance } from './hold-plane'
 import { publishedCovariance } from './judge-relative'
 import { stopSentence } from './stop-sentence'
 
@@ -23,6 +26,8 @@ export interface PlaneJudgement {
   solution: Solution
   /** Other minima that fit almost as well. */
   others: Solution[]
+  /** Elements held, by name; none for the free fit. */
+  held: PlaneHeld
   settings: FitSettings
   /** Julian year; null without times. */
   referenceEpochYr: number | null
@@ -81,16 +86,23 @@ function covarianceOfElements(published: number[][] | null, quantities: Record<s
   return matrix.every((row) => row.every((value) => value - value === 0)) ? { names, matrix } : null
 }
 
+/** A held eccentricity says nothing about being bound. */
+function withHeldShape(held: PlaneHeld, conic: Conic): Conic {
+  if (held.eccentricity === undefined) return conic
+  const [name] = conic.statement.split(':')
+  return { ...conic, probabilityBound: null, parabolaExcluded: null, circleExcluded: null, statement: `${name}: its eccentricity is held at ${held.eccentricity}` }
+}
+
 /**
  * Judges a plane fit.
  * @param judgement points with their errors, solutions, reference epoch where there are times, χ² of the held parabola.
  * @returns the result that leaves the door.
  */
 export function judgePlane(judgement: PlaneJudgement): FitResult {
-  const { points, solution, settings, referenceEpochYr, parabolaChiSquare } = judgement
-  const { values, chiSquare, residuals: rows, jacobian } = solution
-  const degreesOfFreedom = rows.length - values.length
-  const { matrix, conditionNumber, rank } = covarianceOf({ rows: rows.length, columns: values.length, jacobian, residuals: rows })
+  const { points, solution, held, settings, referenceEpochYr, parabolaChiSquare } = judgement
+  const { values, chiSquare, residuals: rows } = solution
+  const { matrix, conditionNumber, rank, free } = planeCovariance(solution, held)
+  const degreesOfFreedom = rows.length - free
   const scale = errorScale(points.basis, chiSquare, degreesOfFreedom)
   const reducedChiSquare = degreesOfFreedom > 0 ? chiSquare / degreesOfFreedom : null
   const context: PointContext = { values, covariance: matrix, scaleSquared: reducedChiSquare, diameterScale: points.diameterScale, referenceEpochYr }
@@ -100,7 +112,7 @@ export function judgePlane(judgement: PlaneJudgement): FitResult {
   const motion: PlaneMotionContext | null = referenceEpochYr === null ? null
     : { points: points.used, values, referenceEpochYr, covariance: matrix, scale, unit: points.unit, diameterScale: points.diameterScale }
   const statistics: FitStatistics = {
-    measures: points.all.length, used: points.used.length, rows: rows.length, parameters: values.length, degreesOfFreedom, chiSquare, reducedChiSquare,
+    measures: points.all.length, used: points.used.length, rows: rows.length, parameters: free, degreesOfFreedom, chiSquare, reducedChiSquare,
     rms: rmsByCoordinate(residuals, units),
     conditionNumber: conditionNumber < Infinity ? conditionNumber : null,
     errorBasis: points.basis,
@@ -111,9 +123,10 @@ export function judgePlane(judgement: PlaneJudgement): FitResult {
     byObserver: statisticsByObserver(residuals, points.all.map((point) => point.observer), Object.keys(units)),
   }
   const elements = Object.fromEntries(Object.entries(quantities).map(([name, quantity]) => [name, elementOf(quantity, matrix, scale)]))
+  markHeld(elements, held)
   const published = publishedCovariance(matrix, scale.published)
   const scaleSquared = points.basis === 'formal' ? 1 : Math.max(1, reducedChiSquare ?? 1)
-  const conic = planeConic({ semiLatusRectum: elements.semiLatusRectum!, eccentricity: elements.eccentricity!, chiSquare, parabolaChiSquare, scaleSquared })
+  const conic = withHeldShape(held, planeConic({ semiLatusRectum: elements.semiLatusRectum!, eccentricity: elements.eccentricity!, chiSquare, parabolaChiSquare, scaleSquared }))
   const alternatives = alternativesOf(judgement, Math.max(1, reducedChiSquare ?? 1))
   return {
     format: 1,
@@ -129,7 +142,7 @@ export function judgePlane(judgement: PlaneJudgement): FitResult {
     residuals,
     alternatives,
     proposals: [],
-    warnings: planeWarnings({ points, statistics, residuals, conic, alternatives, isRetrograde: referenceEpochYr === null ? null : values[3]! < 0 }),
+    warnings: [...planeWarnings({ points, statistics, residuals, conic, alternatives, isRetrograde: referenceEpochYr === null ? null : values[3]! < 0 }), ...aboutHeld(held)],
     state: { model: 'plane', names: referenceEpochYr === null ? [...PLANE_NAMES] : [...PLANE_MOTION_NAMES], values: Array.from(values), covariance: published, referenceEpochYr: referenceEpochYr ?? 0 },
   }
 }

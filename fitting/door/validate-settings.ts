@@ -12,7 +12,7 @@ const DEFAULT_ONLY: Partial<Record<keyof FitSettings, unknown>> = {
 /** Settings that have a meaning, by kind. */
 const SERVED: Record<Kind, readonly (keyof FitSettings)[]> = {
   relative: ['model', 'loss', 'weights', 'hold', 'frameOffset', 'targetPosition', 'errors', 'shortestPeriodYr', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
-  plane: ['model', 'loss', 'weights', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
+  plane: ['model', 'loss', 'weights', 'hold', 'sigmaScale', 'seed', 'diameterScaleArcmin', 'radiusUnit', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
   equatorial: ['model', 'loss', 'weights', 'sigmaScale', 'seed', ...(Object.keys(DEFAULT_ONLY) as (keyof FitSettings)[])],
 }
 
@@ -38,7 +38,8 @@ function isLossServed(kind: Kind, { loss, model }: FitSettings): boolean {
 /** What is served beyond the defaults. */
 function isServedBeyond(kind: Kind, name: keyof FitSettings, value: unknown): boolean {
   if (kind === 'equatorial') return name === 'forces' || (name === 'conicClass' && value === 'parabola')
-  return kind === 'relative' && (name === 'conicClass' || name === 'normalPoints' || name === 'thetaEquinox')
+  if (kind === 'plane') return name === 'conicClass'
+  return name === 'conicClass' || name === 'normalPoints' || name === 'thetaEquinox'
 }
 
 function checkValue(name: keyof FitSettings, value: unknown): void {

@@ -1,31 +1,34 @@
-/** A conic in its plane with elements held: (p, k, h) from those of p, e, φ₀ that stay free. */
+/**
+ * A conic in its plane with elements held: (p, k, h) from those of p, e, φ₀ that stay free. What follows in the parameters of a motion
+ * with times goes through unchanged.
+ */
 import { atan2, cos, DEG, hypot, sin } from '../elementary'
 import type { LeastSquaresProblem } from '../solve/least-squares-problem'
+import type { ParameterMap } from './constrained-path'
 
 export const PLANE_HOLDABLE = ['semiLatusRectum', 'eccentricity', 'periapsisDirection'] as const
 export type PlaneHeld = Partial<Record<(typeof PLANE_HOLDABLE)[number], number>>
 
-/** Three values and their derivatives by the free parameters. */
-export interface HeldPlane {
-  free: number
-  /** (p, k, h) of the free parameters, and ∂(p, k, h) row-major 3 × free; false outside the domain. */
-  expand(y: ArrayLike<number>, x: Float64Array, derivatives: Float64Array): boolean
+const CONIC = 3
+
+/** The map with its start. */
+export interface HeldPlane extends ParameterMap {
   start(values: ArrayLike<number>): Float64Array
 }
 
 /**
  * The map from the free of (p, e, φ₀) to (p, k, h).
  * @param held in published units (unit of r, 1, degrees).
+ * @param full parameters of the whole problem, at least 3; those after the third are free.
  * @returns the map with its start; a circle has no φ₀.
  */
-export function heldPlane(held: PlaneHeld): HeldPlane {
-  const isCircle = held.eccentricity === 0
-  const names = PLANE_HOLDABLE.filter((name) => held[name] === undefined && !(isCircle && name === 'periapsisDirection'))
-  const index = (name: (typeof PLANE_HOLDABLE)[number]) => names.indexOf(name)
-  const [ip, ie, id] = [index('semiLatusRectum'), index('eccentricity'), index('periapsisDirection')]
-  const free = names.length
+export function heldPlane(held: PlaneHeld, full: number): HeldPlane {
+  const names = PLANE_HOLDABLE.filter((name) => held[name] === undefined && !(held.eccentricity === 0 && name === 'periapsisDirection'))
+  const [ip, ie, id] = PLANE_HOLDABLE.map((name) => names.indexOf(name)) as [number, number, number]
+  const own = names.length
+  const free = own + full - CONIC
   return {
-    free,
+    free, full,
     expand(y, x, derivatives) {
       const p = ip < 0 ? held.semiLatusRectum! : y[ip]!
       const e = ie < 0 ? held.eccentricity! : y[ie]!
@@ -35,6 +38,8 @@ export function heldPlane(held: PlaneHeld): HeldPlane {
       x[0] = p
       x[1] = e * c
       x[2] = e * s
+      for (let j = CONIC; j < full; j++) x[j] = y[own + j - CONIC]!
+      if (derivatives === null) return true
       derivatives.fill(0)
       if (ip >= 0) derivatives[ip] = 1
       if (ie >= 0) {
@@ -45,25 +50,27 @@ export function heldPlane(held: PlaneHeld): HeldPlane {
         derivatives[free + id] = -e * s
         derivatives[2 * free + id] = e * c
       }
+      for (let j = CONIC; j < full; j++) derivatives[j * free + own + j - CONIC] = 1
       return true
     },
     start(values) {
-      const own = { semiLatusRectum: values[0]!, eccentricity: hypot(values[1]!, values[2]!), periapsisDirection: atan2(values[2]!, values[1]!) }
-      return Float64Array.from(names, (name) => own[name])
+      const conic = { semiLatusRectum: values[0]!, eccentricity: hypot(values[1]!, values[2]!), periapsisDirection: atan2(values[2]!, values[1]!) }
+      return Float64Array.from({ length: free }, (_, j) => (j < own ? conic[names[j]!] : values[j - own + CONIC]!))
     },
   }
 }
 
 /**
  * The problem in the free parameters.
- * @param full problem in (p, k, h).
+ * @param full problem whose first parameters are p, k, h.
  * @param map of the held elements.
  * @returns a problem of map.free parameters.
  */
 export function heldPlaneProblem(full: LeastSquaresProblem, map: HeldPlane): LeastSquaresProblem {
-  const x = new Float64Array(3)
-  const derivatives = new Float64Array(3 * map.free)
-  const wide = new Float64Array(3 * full.rows)
+  const p = full.parameters
+  const x = new Float64Array(p)
+  const derivatives = new Float64Array(p * map.free)
+  const wide = new Float64Array(p * full.rows)
   return {
     parameters: map.free,
     rows: full.rows,
@@ -73,7 +80,7 @@ export function heldPlaneProblem(full: LeastSquaresProblem, map: HeldPlane): Lea
       for (let i = 0; i < full.rows; i++) {
         for (let j = 0; j < map.free; j++) {
           let sum = 0
-          for (let k = 0; k < 3; k++) sum += wide[3 * i + k]! * derivatives[k * map.free + j]!
+          for (let k = 0; k < p; k++) sum += wide[p * i + k]! * derivatives[k * map.free + j]!
           jacobian[i * map.free + j] = sum
         }
       }
