@@ -132,12 +132,12 @@ function statisticsOf(judgement: Judgement, errors: { conditionNumber: number; r
   }
 }
 
-/** Profile intervals where they are due; of orbits with all seven parameters free. */
+/** Profile intervals where they are due; of orbits with all seven parameters free, about the reference point itself. */
 function profileOf(judgement: Judgement, errors: SolutionErrors, elements: RelativeElements, published: Record<string, Element>): FitResult['profile'] {
   const { solutions, form, settings, referenceEpochYr, measures } = judgement
   const { solution, rows } = solutions[0]!
   const roots = profileRoots(errors.scale, effectiveRows(measures.used) - solution.values.length)
-  if (!form.isRegular || errors.covariance === null || roots === null || !isProfileDue(settings.errors, solution.residuals.length, published.period, errors.conditionNumber)) return undefined
+  if (!form.isRegular || form.frame !== 'none' || errors.covariance === null || roots === null || !isProfileDue(settings.errors, solution.residuals.length, published.period, errors.conditionNumber)) return undefined
   return relativeProfile({ ...solution, problem: skyProblem(form.path, rows), covariance: errors.covariance, roots }, elements, referenceEpochYr)
 }
 

@@ -82,3 +82,11 @@ describe('star S2, seven elements with offset and drift of the focus, without a 
     expect(held.statistics.chiSquare - result.statistics.chiSquare).toBeLessThan(6)
   })
 })
+
+describe('star S2 with profile intervals asked for', () => {
+  it('gives none beside a fitted reference point, and every element is a number', () => {
+    const result = fitted({ frameOffset: 'offset-and-drift', errors: 'profile' })
+    expect(result.profile).toBeUndefined()
+    for (const { value, sigma } of Object.values(result.elements)) expect([value, sigma].every((number) => Number.isFinite(number))).toBe(true)
+  })
+})
