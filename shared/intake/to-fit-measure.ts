@@ -1,5 +1,6 @@
 import type { EquatorialMeasure, FitRequest, FitSettings, Kind, PlaneMeasure, RelativeMeasure } from '../../fitting/types'
 import type { ParsedEquatorialRow, ParsedPlaneRow, ParsedRelativeRow, ParsedRow } from './parsed-row'
+import { julianEpochFromBesselian } from '../../fitting/time'
 import { julianDateOfIso } from './read-time'
 
 const RAD_A_DEG = Math.PI / 180
@@ -27,7 +28,23 @@ export function fitRequestOf(kind: Kind, measures: readonly FitMeasure[], settin
 }
 
 function relativeMeasure(row: ParsedRelativeRow, credit: Credit): RelativeMeasure {
-  return given({ ...credit, station: row.stationText, epochYr: row.epochYr, nights: row.nights, position: positionOf(row) })
+  return given({
+    ...credit,
+    station: row.stationText,
+    epochYr: row.epochYr,
+    nights: row.nights,
+    method: row.method,
+    thetaEquinoxYr: row.thetaFrame === null ? null : equinoxYrOf(row.thetaFrame, row.epochYr),
+    position: positionOf(row),
+  })
+}
+
+/** The equinox that a stated frame of θ means, Julian year; ICRS axes are those of J2000.0 within 0.02″. */
+function equinoxYrOf(thetaFrame: string, epochYr: number): number {
+  if (thetaFrame === 'of_date') return epochYr
+  if (thetaFrame === 'ICRS' || thetaFrame === 'J2000') return 2000
+  if (thetaFrame === 'B1950') return julianEpochFromBesselian(1950)
+  return Number(thetaFrame)
 }
 
 function positionOf(row: ParsedRelativeRow): RelativeMeasure['position'] {
