@@ -86,7 +86,7 @@ describe.each([{ name: 'at a desk', size: DESK }, { name: 'on a phone', size: PH
     await page.getByRole('dialog').getByRole('button', { name: 'Discard' }).click()
     await page.waitForURL(/\/uploads$/)
     await page.getByRole('heading', { name: 'Uploads', level: 1 }).waitFor()
-    expect(await page.getByText('winter again.csv').count()).toBe(0)
+    await expect.poll(() => page.getByText('winter again.csv').count()).toBe(0)
     await context.close()
   })
 
