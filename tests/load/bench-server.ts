@@ -1,5 +1,5 @@
 /**
- * npm run bench:server: 500 requests each to a list route and a public edition page while two fits run throughout. Prints the
+ * npm run bench:server [-- CONNECTIONS]: 500 requests each to a list route and a public edition page while two fits run throughout. Prints the
  * p99 of each beside its goal. Loopback only; ends by itself.
  */
 import { randomBytes } from 'node:crypto'
@@ -18,8 +18,8 @@ import { addTarget, uploadAndSend } from '../builders/work'
 import { freshDataDir, startServer } from '../e2e/support/running-server'
 
 const REQUESTS = 500
-const CONNECTIONS = 4
-const MEASURES = 1000
+const CONNECTIONS = Number(process.argv[2] ?? 1)
+const MEASURES = 300
 const NOISE = { sigmaThetaDeg: 0.6, sigmaRhoArcsec: 0.008 }
 const GOALS = [
   { what: 'list route', path: '/api/v1/orbits', goalMs: 50 },
