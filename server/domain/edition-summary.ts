@@ -4,7 +4,7 @@ import { formatElement, formatValueAndSigma, withUnit } from '../../shared/units
 
 /** One line of what an edition says, for lists and mail: "P 62.41 ± 0.38 yr, e 0.482, a 0.861″". */
 export function editionSummary(result: FitResult): string {
-  if (result.model === 'line') return 'Motion so far straight'
+  if (result.model === 'line') return straightSummary(result)
   if (result.model === 'still') return 'No motion so far'
   if (result.kind === 'equatorial') return solarSummary(result)
   const parts = result.kind === 'plane' ? planeParts(result) : pairParts(result)
@@ -17,6 +17,13 @@ function pairParts({ elements }: FitResult): (string | null)[] {
     said('e', elements.eccentricity, formatAlone),
     said('a', elements.semiMajorAxis, formatAlone),
   ]
+}
+
+/** "Motion so far straight: 0.0410 ± 0.0012″/yr toward 231.2°, closest 3.12″ in 2088.1", as far as the elements are known. */
+function straightSummary({ elements: { motion, motionDirection, closestApproach, closestApproachTime } }: FitResult): string {
+  const moving = motion && motionDirection ? `${formatElement(motion)} toward ${formatAlone(motionDirection)}` : null
+  const closest = closestApproach && closestApproachTime ? `closest ${formatAlone(closestApproach)} in ${formatValueAndSigma(closestApproachTime.value, closestApproachTime.sigma).value}` : null
+  return ['Motion so far straight', [moving, closest].filter(part => part !== null).join(', ')].filter(part => part !== '').join(': ')
 }
 
 /** "q 0.8841 ± 0.0006 au, e 0.9987 ± 0.0021, parabola not excluded; honest over its 41-day arc". */

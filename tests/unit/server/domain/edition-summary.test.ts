@@ -13,6 +13,8 @@ describe('editionSummary', () => {
 
   it('says of a straight motion that it is no orbit', () => {
     expect(editionSummary(pairResult({}, { model: 'line' }))).toBe('Motion so far straight')
+    const elements = { motion: element(0.041, 0.0012, 'arcsec/yr'), motionDirection: element(231.2, 0.4, 'deg'), closestApproach: element(3.12, 0.05, 'arcsec'), closestApproachTime: element(2088.1, 2.3, 'Julian year') }
+    expect(editionSummary({ ...pairResult({}, { model: 'line' }), elements })).toBe('Motion so far straight: 0.0410 ± 0.0012″/yr toward 231.20°, closest 3.120″ in 2088.1')
   })
 
   it('leaves out what was not determined', () => {
