@@ -4,7 +4,7 @@
  * unit length at every accepted point, and [J r] is factored to p + 1 rows, so the cost of a step does not grow with rows.
  * Symbols: δ the step in scaled parameters, λ the damping (÷ 9 after an accepted step, × 11 after a rejected one),
  * predicted fall of χ² = ‖c‖² − ‖Rδ + c‖².
- * Source: Marquardt 1963, J. SIAM 11, 431; stopping tests after Moré 1978, Lecture Notes in Mathematics 630, 105.
+ * Source: Marquardt 1963, J. SIAM 11, 431; stopping tests after Moré 1978, in Numerical Analysis (ed. Watson, Springer), 105.
  */
 import type { StopReason } from '../types'
 import { dampedStep } from './damped-step'
@@ -86,7 +86,7 @@ function reasonToStop(point: Iterate, trial: Trial, damping: number, limits: Req
  * @param settings limits; each has a default.
  * @returns the best point met, its χ², residuals and Jacobian there, and why the solver stopped.
  * @throws RangeError where the model is not defined at the start (a programmer's error).
- * Source: Marquardt 1963, J. SIAM 11, 431; Moré 1978, Lecture Notes in Mathematics 630, 105.
+ * Source: Marquardt 1963, J. SIAM 11, 431; Moré 1978, in Numerical Analysis (ed. Watson, Springer), 105.
  */
 export function solveLeastSquares(problem: LeastSquaresProblem, start: ArrayLike<number>, settings: SolverSettings = {}): Solution {
   const limits = { ...DEFAULTS, ...settings }
